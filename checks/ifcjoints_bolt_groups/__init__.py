@@ -1,0 +1,1 @@
+"""Elastic and plastic bolt groups under moment out of their plane."""

@@ -1,0 +1,1 @@
+"""Audit the bolted moment joints of a steel building model."""

@@ -1,0 +1,1 @@
+"""Design actions, from a table beside the model."""

@@ -1,0 +1,1 @@
+"""What everything is made of: plain data, no IFC, no files."""

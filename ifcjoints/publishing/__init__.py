@@ -1,0 +1,1 @@
+"""What a run leaves behind: audit.json, property sets, the report."""

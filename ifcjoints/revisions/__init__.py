@@ -1,0 +1,1 @@
+"""Two audits side by side."""

@@ -1,0 +1,90 @@
+"""Everything that can be set, in one model; read from TOML, recorded whole in audit.json.
+
+[basis]
+standard = "EN 1993-1-8"       # or "AISC 360"; left out: the one that covers most of the model's bolts
+gamma_M2 = 1.25
+
+[defaults]                     # used where the model is silent; each use is an assumption, and said
+bolt_grade = "8.8"
+steel_grade = "S355"
+
+[checks."bolt_group.plastic"]  # options of a check, as `ifcjoints checks NAME` tells them
+triangular_limit = "always"
+"""
+
+from __future__ import annotations
+
+import sys
+from pathlib import Path
+from typing import Any
+
+from pydantic import Field, ValidationError
+
+from .errors import SettingsError
+from .model.base import Frozen
+from .model.basis import EDITIONS, Basis, StandardName
+from .model.units import Degrees, Mm
+
+if sys.version_info >= (3, 11):
+    import tomllib
+else:  # pragma: no cover
+    import tomli as tomllib
+
+
+class BasisSettings(Frozen):
+    """The governing standard and its factors. `standard` None: chosen by the model's own bolts."""
+
+    standard: StandardName | None = None
+    gamma_M0: float = Field(default=1.0, gt=0)
+    gamma_M1: float = Field(default=1.0, gt=0)
+    gamma_M2: float = Field(default=1.25, gt=0)
+    phi_bolt: float = Field(default=0.75, gt=0, le=1)
+    phi_compression: float = Field(default=0.90, gt=0, le=1)
+
+    def basis(self, standard: StandardName) -> Basis:
+        """Return the frozen basis of a run to `standard`."""
+        factors = self.model_dump(exclude={"standard"})
+        return Basis(standard=standard, edition=EDITIONS[standard], **factors)
+
+
+class Defaults(Frozen):
+    """What to assume where the model is silent; None: assume nothing, the check says what it lacks."""
+
+    bolt_grade: str | None = None
+    steel_grade: str | None = None
+
+
+class DetectionSettings(Frozen):
+    """Tolerances of finding joints, in mm and degrees."""
+
+    contact_gap_mm: Mm = Field(default=6.0, gt=0, description="parts nearer than this touch")
+    row_tolerance_mm: Mm = Field(default=3.0, gt=0, description="bolts this close in height share a row")
+    axis_tolerance_deg: Degrees = Field(default=3.0, gt=0, lt=45, description="axes within this are parallel")
+    flange_cover: float = Field(
+        default=0.5, gt=0, le=1, description="share of a flange's width that the end plate must cover"
+    )
+
+
+class Settings(Frozen):
+    """All settings of a run."""
+
+    basis: BasisSettings = BasisSettings()
+    defaults: Defaults = Defaults()
+    detection: DetectionSettings = DetectionSettings()
+    checks: dict[str, dict[str, Any]] = {}
+
+
+def read_settings(path: Path) -> Settings:
+    """Read settings from a TOML file; SettingsError names the file and the first thing wrong in it."""
+    try:
+        data = tomllib.loads(path.read_text(encoding="utf-8"))
+    except OSError as error:
+        raise SettingsError(f"{path}: the settings cannot be read ({error.strerror}).") from error
+    except (tomllib.TOMLDecodeError, UnicodeDecodeError) as error:
+        raise SettingsError(f"{path}: this is not TOML: {error}.") from error
+    try:
+        return Settings.model_validate(data)
+    except ValidationError as error:
+        first = error.errors()[0]
+        place = ".".join(str(part) for part in first["loc"])
+        raise SettingsError(f"{path}: {place}: {first['msg']}.") from error

@@ -1,0 +1,1 @@
+"""Data of the trade as small CSV files, each with its source."""
