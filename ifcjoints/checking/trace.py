@@ -129,17 +129,19 @@ def _function(name: str, value: float, arguments: Sequence[Quantity]) -> Quantit
 
 def least(first: N, *others: N) -> N:
     """The smallest of the figures, as the standards write min(a; b)."""
-    smallest = min(float(value) for value in (first, *others))
+    values: list[Quantity | float] = [first, *others]
+    smallest = min(float(value) for value in values)
     if isinstance(first, Quantity):
-        return _function("min", smallest, [_quantity(value) for value in (first, *others)])
+        return _function("min", smallest, [_quantity(value) for value in values])
     return smallest
 
 
 def greatest(first: N, *others: N) -> N:
     """The largest of the figures, as the standards write max(a; b)."""
-    largest = max(float(value) for value in (first, *others))
+    values: list[Quantity | float] = [first, *others]
+    largest = max(float(value) for value in values)
     if isinstance(first, Quantity):
-        return _function("max", largest, [_quantity(value) for value in (first, *others)])
+        return _function("max", largest, [_quantity(value) for value in values])
     return largest
 
 
