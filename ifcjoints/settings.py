@@ -65,12 +65,34 @@ class DetectionSettings(Frozen):
     )
 
 
+class ReadingSettings(Frozen):
+    """Where exporting programs put what the open schema has no place for: "Set.Property", or "*.Property"."""
+
+    bolt_grade_properties: tuple[str, ...] = (
+        "*.StrengthGrade",
+        "*.BoltGrade",
+        "*.Bolt grade",
+        "*.BoltStandard",
+        "*.Bolt standard",
+        "*.Grade",
+        "*.Strength class",
+    )
+    steel_grade_properties: tuple[str, ...] = (
+        "*.StructuralGrade",
+        "*.Grade",
+        "*.Material grade",
+        "*.Material",
+    )
+    designation_properties: tuple[str, ...] = ("*.Profile", "*.Section", "*.ProfileName", "*.Reference")
+
+
 class Settings(Frozen):
     """All settings of a run."""
 
     basis: BasisSettings = BasisSettings()
     defaults: Defaults = Defaults()
     detection: DetectionSettings = DetectionSettings()
+    reading: ReadingSettings = ReadingSettings()
     checks: dict[str, dict[str, Any]] = {}
 
 

@@ -32,9 +32,7 @@ def installed_checks(packs: Sequence[str] = (), only: str | None = None) -> list
     known = {_package(point) for point in points}
     for pack in packs:
         if pack not in known:
-            raise SettingsError(
-                f'no check pack "{pack}" is installed; installed are: {", ".join(sorted(known))}.'
-            )
+            raise SettingsError(f'no check pack "{pack}" is installed; installed are: {", ".join(sorted(known))}.')
     return [
         _load(point)
         for point in points
@@ -52,9 +50,7 @@ def _load(point: EntryPoint) -> InstalledCheck:
     except CheckRegistrationError:
         raise
     except Exception as error:
-        raise CheckRegistrationError(
-            f"the check {point.name} ({point.value}) cannot be loaded: {error}."
-        ) from error
+        raise CheckRegistrationError(f"the check {point.name} ({point.value}) cannot be loaded: {error}.") from error
     if not isinstance(check, Check) or check.name != point.name:
         raise CheckRegistrationError(
             f"the entry point {point.name} ({point.value}) does not name a check of that name."

@@ -65,9 +65,7 @@ def run_checks(
     )
 
 
-def resolve_options(
-    checks: Sequence[InstalledCheck], given: dict[str, dict[str, object]]
-) -> dict[str, Frozen]:
+def resolve_options(checks: Sequence[InstalledCheck], given: dict[str, dict[str, object]]) -> dict[str, Frozen]:
     """Return every check's options, defaults filled in; SettingsError names what does not fit."""
     resolved: dict[str, Frozen] = {}
     for installed in checks:

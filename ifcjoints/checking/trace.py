@@ -59,9 +59,7 @@ class Quantity:
         negative = self.figures.startswith("-") or self.figures.startswith("−")
         return self.symbols, f"({self.figures})" if negative and rank > _SUM else self.figures
 
-    def _join(
-        self, other: Quantity | float, value: float, sign: str, ranks: tuple[int, int, int]
-    ) -> Quantity:
+    def _join(self, other: Quantity | float, value: float, sign: str, ranks: tuple[int, int, int]) -> Quantity:
         left, right = self._wrapped(ranks[0]), _quantity(other)._wrapped(ranks[1])
         return Quantity(value, f"{left[0]}{sign}{right[0]}", f"{left[1]}{sign}{right[1]}", ranks[2])
 
@@ -172,9 +170,7 @@ class Trace:
         self._record(symbol, result.symbols, result.figures, result.value, unit, reference)
         return Quantity(result.value, symbol, figure(result.value))
 
-    def _record(
-        self, symbol: str, symbols: str, figures: str, value: float, unit: str, reference: str
-    ) -> None:
+    def _record(self, symbol: str, symbols: str, figures: str, value: float, unit: str, reference: str) -> None:
         shown = value / SCALE.get(unit, 1.0)
         self.steps.append(
             Step(

@@ -32,8 +32,6 @@ class Basis(Frozen):
     def national_choices(self) -> dict[str, float]:
         """Return the factors that this standard uses, by symbol."""
         names = (
-            ("gamma_M0", "gamma_M1", "gamma_M2")
-            if self.standard == "EN 1993-1-8"
-            else ("phi_bolt", "phi_compression")
+            ("gamma_M0", "gamma_M1", "gamma_M2") if self.standard == "EN 1993-1-8" else ("phi_bolt", "phi_compression")
         )
         return {name: getattr(self, name) for name in names}

@@ -30,9 +30,7 @@ Configuration = Literal[
 MemberEnd = Literal["start", "end"]
 RowPosition = Literal["outside_top", "between", "outside_bottom"]
 Source = Literal["read", "measured", "assumed", "given"]
-SectionShape = Literal[
-    "I", "U", "L", "T", "hollow_rectangular", "hollow_round", "rectangle", "round", "other"
-]
+SectionShape = Literal["I", "U", "L", "T", "hollow_rectangular", "hollow_round", "rectangle", "round", "other"]
 
 
 class Provenance(Frozen):

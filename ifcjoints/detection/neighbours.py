@@ -1,0 +1,117 @@
+"""What else belongs to an end-plate joint: haunches, stiffeners, welds."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+
+import numpy as np
+
+from ..model.joints import JointWeld
+from ..model.parts import Part, WeldPart
+from ..model.units import Mm
+from .end_plates import EndConnection
+from .flanges import FlangeBand
+from .plies import PartIndex
+
+BEYOND: Mm = 150.0
+"""Stiffeners of the carrier are looked for this far past the end plate."""
+
+ACROSS = 0.3
+"""A stiffener's normal and the carrier's axis have at least this cosine (a diagonal stiffener's is about 0.7)."""
+
+OVERHANG: Mm = 30.0
+"""A stiffener may stand out past the carrier's flange tips by this."""
+
+WELD_REACH: Mm = 3.0
+
+
+def standing_roles(
+    connection: EndConnection, flanges: tuple[FlangeBand, FlangeBand] | None, parts: Sequence[Part]
+) -> dict[int, str]:
+    """Return the role of each part, other than the member, that stands on the end plate."""
+    outer = {band.part for band in flanges or ()} - {connection.member}
+    return {
+        part: _standing_role(parts[part], part in outer, bool(outer), connection)
+        for part in connection.cuts
+        if part != connection.member
+    }
+
+
+def _standing_role(part: Part, has_flange: bool, haunched: bool, connection: EndConnection) -> str:
+    if part.plate is None:
+        return "haunch_section" if has_flange else "other"
+    if has_flange:
+        return "haunch_flange"
+    in_web_plane = abs(part.plate.frame.axes[2] @ connection.frame.axes[0]) > 0.7
+    return "haunch_web" if haunched and in_web_plane else "stiffener"
+
+
+def carrier_stiffeners(
+    connection: EndConnection, carrier: Part, parts: Sequence[Part], index: PartIndex, taken: set[int]
+) -> list[int]:
+    """Return the plates that stiffen the carrier behind the end plate: within its section, beside the bolts."""
+    member = carrier.member
+    if member is None:
+        return []
+    low, high = parts[connection.plate].bounds
+    reach = max(member.section.h, member.section.b) + BEYOND
+    found = []
+    for number in index.around(low - reach, high + reach):
+        plate = parts[number].plate
+        if number in taken or plate is None or abs(plate.frame.axes[2] @ connection.frame.axes[2]) > 0.5:
+            continue
+        if _is_beside(parts[number], connection) and _is_stiffener(parts[number], carrier):
+            found.append(number)
+    return found
+
+
+def _is_beside(part: Part, connection: EndConnection) -> bool:
+    low, high = part.bounds
+    y = connection.frame.to_local((low + high) / 2)[1]
+    _, bottom, _, top = connection.outline.bounds
+    return bool(bottom - BEYOND < y < top + BEYOND)
+
+
+def _is_stiffener(part: Part, carrier: Part) -> bool:
+    """Whether a plate stands across the carrier, within its section and on one side of its web."""
+    member, plate = carrier.member, part.plate
+    if member is None or plate is None or abs(plate.frame.axes[2] @ member.axis) < ACROSS:
+        return False
+    corners = np.vstack([solid.vertices for solid in part.solids]) - member.start
+    depth, width = corners @ member.depth, corners @ member.strong_axis
+    inside = np.abs(depth).max() < member.section.h / 2 + 1.0 and np.abs(width).max() < member.section.b / 2 + OVERHANG
+    return bool(inside and (width.min() > -1.0 or width.max() < 1.0))
+
+
+def welds_of(
+    connection: EndConnection,
+    flanges: tuple[FlangeBand, FlangeBand] | None,
+    plate: Part,
+    welds: Sequence[WeldPart],
+) -> list[JointWeld]:
+    """Return the modelled welds that touch the end plate on its member's side."""
+    low, high = plate.bounds
+    found = []
+    for weld in welds:
+        if np.any(weld.high < low - WELD_REACH) or np.any(weld.low > high + WELD_REACH):
+            continue
+        local = connection.frame.to_local((weld.low + weld.high) / 2)
+        if local[2] > 0:
+            found.append(
+                JointWeld(
+                    global_id=weld.global_id,
+                    at=_place(float(local[1]), flanges),
+                    type=weld.type,
+                    throat_mm=None if weld.throat is None else round(weld.throat, 2),
+                )
+            )
+    return found
+
+
+def _place(y: Mm, flanges: tuple[FlangeBand, FlangeBand] | None) -> str:
+    if flanges is None:
+        return "web"
+    for name, band in zip(("bottom flange", "top flange"), flanges, strict=True):
+        if band.low - band.thickness <= y <= band.high + band.thickness:
+            return name
+    return "web"

@@ -1,0 +1,175 @@
+"""An element's body as solids, read straight from its entities.
+
+Swept solids, mapped items, planar B-reps and face sets are read here; anything else is Unreadable and
+left to the geometry kernel. Every shape that many elements share is read once.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from dataclasses import dataclass
+from typing import Any
+
+import numpy as np
+
+from ..model.geometry import Frame, Solid
+from ..model.units import Array, Mm
+from .placements import Placements, is_rigid
+from .profiles import Profile, read_profile
+from .units import Units
+from .unreadable import Unreadable
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class Sweep:
+    """How a solid was extruded: the profile's plane (4, 4) in the piece's own axes, and the way along."""
+
+    profile: Profile
+    plane: Array
+    along: Array
+
+    @property
+    def length(self) -> Mm:
+        """The extrusion's length."""
+        return float(np.linalg.norm(self.along))
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class Piece:
+    """One solid in the axes it was written in, and its sweep if it was extruded."""
+
+    solid: Solid
+    sweep: Sweep | None = None
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class PlacedPiece:
+    """A piece and the rigid transformation (4, 4) that brings it into the world."""
+
+    piece: Piece
+    matrix: Array
+
+    def in_world(self) -> Solid:
+        """Return the solid in world axes."""
+        return self.piece.solid.moved(self.matrix)
+
+
+class BodyReader:
+    """Reads the solids of representation items; each item is read once."""
+
+    def __init__(self, units: Units, placements: Placements) -> None:
+        self._angle = units.angle
+        self._placements = placements
+        self._known: dict[int, list[PlacedPiece]] = {}
+        self._kinds: dict[str, Callable[[Any], list[PlacedPiece]]] = {
+            "IfcExtrudedAreaSolid": self._extruded,
+            "IfcFacetedBrep": lambda item: self._shells([item.Outer]),
+            "IfcFacetedBrepWithVoids": lambda item: self._shells([item.Outer]),
+            "IfcShellBasedSurfaceModel": lambda item: self._shells(item.SbsmBoundary),
+            "IfcFaceBasedSurfaceModel": lambda item: self._shells(item.FbsmFaces),
+            "IfcPolygonalFaceSet": self._polygonal,
+            "IfcTriangulatedFaceSet": self._triangulated,
+            "IfcMappedItem": self._mapped,
+        }
+
+    def pieces(self, element: Any) -> list[PlacedPiece]:
+        """Return an element's solids in the world, none without a body; Unreadable: ask the kernel."""
+        representation = body_of(element)
+        if representation is None:
+            return []
+        world = self._placements.of_element(element.ObjectPlacement)
+        return [moved for item in representation.Items for moved in _moved(self.item(item), world)]
+
+    def world_of(self, element: Any) -> Array:
+        """Return an element's placement in the world."""
+        return self._placements.of_element(element.ObjectPlacement)
+
+    def item(self, item: Any) -> list[PlacedPiece]:
+        """Return one representation item's solids in its own axes."""
+        number = item.id()
+        if number not in self._known:
+            reader = self._kinds.get(item.is_a())
+            if reader is None:
+                raise Unreadable(f"its body is an {item.is_a()}")
+            self._known[number] = reader(item)
+        return self._known[number]
+
+    def _extruded(self, item: Any) -> list[PlacedPiece]:
+        profile = read_profile(item.SweptArea, self._placements, self._angle)
+        plane = self._placements.axes(item.Position)
+        direction = np.array(item.ExtrudedDirection.DirectionRatios, float)
+        along = direction / np.linalg.norm(direction) * item.Depth * self._placements.length
+        if not np.linalg.norm(along) > 1e-6:
+            raise Unreadable("its extrusion has no depth")
+        solid = Solid.extruded(profile.rings, plane, along)
+        return [PlacedPiece(Piece(solid, Sweep(profile, plane, plane[:3, :3] @ along)), np.eye(4))]
+
+    def _shells(self, shells: Any) -> list[PlacedPiece]:
+        return [PlacedPiece(Piece(self._shell(shell)), np.eye(4)) for shell in shells]
+
+    def _shell(self, shell: Any) -> Solid:
+        numbers: dict[int, int] = {}
+        points: list[tuple[float, ...]] = []
+        faces = []
+        for face in shell.CfsFaces:
+            loops = []
+            for bound in sorted(face.Bounds, key=lambda bound: not bound.is_a("IfcFaceOuterBound")):
+                if not bound.Bound.is_a("IfcPolyLoop"):
+                    raise Unreadable("its faces have curved edges")
+                loop = []
+                for point in bound.Bound.Polygon:
+                    key = point.id()
+                    if key not in numbers:
+                        numbers[key] = len(points)
+                        points.append(point.Coordinates)
+                    loop.append(numbers[key])
+                if len(loop) >= 3:
+                    loops.append(loop if bound.Orientation else loop[::-1])
+            if loops:
+                faces.append(loops)
+        if len(faces) < 4:
+            raise Unreadable("its shell has fewer than four faces")
+        return Solid.from_faces(np.array(points, float) * self._placements.length, faces)
+
+    def _polygonal(self, item: Any) -> list[PlacedPiece]:
+        renumber = item.PnIndex
+        faces = []
+        for face in item.Faces:
+            loops = [face.CoordIndex, *(getattr(face, "InnerCoordIndices", None) or ())]
+            faces.append([[(renumber[i - 1] if renumber else i) - 1 for i in loop] for loop in loops])
+        vertices = np.array(item.Coordinates.CoordList, float) * self._placements.length
+        return [PlacedPiece(Piece(Solid.from_faces(vertices, faces)), np.eye(4))]
+
+    def _triangulated(self, item: Any) -> list[PlacedPiece]:
+        renumber = item.PnIndex
+        triangles = [[[(renumber[i - 1] if renumber else i) - 1 for i in triple]] for triple in item.CoordIndex]
+        vertices = np.array(item.Coordinates.CoordList, float) * self._placements.length
+        return [PlacedPiece(Piece(Solid.from_faces(vertices, triangles)), np.eye(4))]
+
+    def _mapped(self, item: Any) -> list[PlacedPiece]:
+        source = item.MappingSource
+        matrix = self._placements.operator(item.MappingTarget) @ self._placements.axes(source.MappingOrigin)
+        inner = [piece for part in source.MappedRepresentation.Items for piece in self.item(part)]
+        return _moved(inner, matrix)
+
+
+def body_of(element: Any) -> Any | None:
+    """Return the representation that holds an element's body, or None."""
+    shape = element.Representation
+    if shape is None:
+        return None
+    solid = [each for each in shape.Representations if each.RepresentationIdentifier in (None, "Body", "Facetation")]
+    solid = [each for each in solid if each.RepresentationType not in ("Curve2D", "Curve3D", "BoundingBox")]
+    return solid[0] if solid else None
+
+
+def _moved(pieces: list[PlacedPiece], matrix: Array) -> list[PlacedPiece]:
+    """Move pieces; what is scaled or mirrored is worked into the solid itself, so matrices stay rigid."""
+    if is_rigid(matrix):
+        return [PlacedPiece(placed.piece, matrix @ placed.matrix) for placed in pieces]
+    return [PlacedPiece(Piece(placed.piece.solid.moved(matrix @ placed.matrix)), np.eye(4)) for placed in pieces]
+
+
+def frame_of(matrix: Array) -> Frame:
+    """Return a rigid transformation as a frame."""
+    return Frame(matrix[:3, 3], matrix[:3, :3].T)

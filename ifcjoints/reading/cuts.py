@@ -1,0 +1,39 @@
+"""The area in which a plane cuts a solid."""
+
+from __future__ import annotations
+
+from typing import TypeAlias
+
+import shapely
+
+from ..model.geometry import Frame, Solid
+from ..model.units import Array
+
+Area: TypeAlias = shapely.Polygon | shapely.MultiPolygon
+
+
+def cut_area(solid: Solid, frame: Frame) -> Area:
+    """Return the area (empty if none) in which the frame's plane cuts the solid, in the frame's x and y."""
+    segments = solid.cut(frame)
+    if len(segments) < 3:
+        return shapely.Polygon()
+    area = shapely.build_area(shapely.multilinestrings(shapely.linestrings(segments)))
+    return area if isinstance(area, shapely.Polygon) and not area.is_empty else _by_cells(segments)
+
+
+def _by_cells(segments: Array) -> Area:
+    """Join the cells that lie inside, for bodies put together from boxes with faces between them."""
+    noded = shapely.union_all(shapely.linestrings(segments))
+    cells = shapely.get_parts(shapely.polygonize(shapely.get_parts(noded)))
+    inside = [cell for cell in cells if _is_inside(cell.representative_point(), segments)]
+    area = shapely.union_all(inside)
+    return area if isinstance(area, Area) else shapely.Polygon()
+
+
+def _is_inside(point: shapely.Point, segments: Array) -> bool:
+    """Count the cut's segments to the right of a point; odd is inside."""
+    a, b = segments[:, 0], segments[:, 1]
+    rising = (a[:, 1] > point.y) != (b[:, 1] > point.y)
+    a, b = a[rising], b[rising]
+    at = a[:, 0] + (point.y - a[:, 1]) * (b - a)[:, 0] / (b - a)[:, 1]
+    return bool((at > point.x).sum() % 2)

@@ -1,0 +1,202 @@
+"""Fastener elements → bolts: one :class:`Bolt` for each physical bolt."""
+
+from __future__ import annotations
+
+import re
+from typing import Any
+
+import ifcopenshell.util.element as element_util
+import numpy as np
+
+from ..model.joints import Provenance
+from ..model.parts import Bolt, BoltKind
+from ..model.units import Array, Mm
+from ..tables.bolts import bolt_grade
+from .axial import BoltBody, as_turned, bolts_of
+from .bodies import BodyReader, Piece, PlacedPiece
+from .kernel import solid_from_kernel
+from .properties import property_texts
+from .unreadable import Unreadable
+
+KIND_WORDS: tuple[tuple[BoltKind, str], ...] = (
+    ("stud", r"\bstud|shear ?connector"),
+    ("anchor", r"anchor|holding[ -]?down"),
+    ("loose_part", r"^\W*(nut|washer)\b"),
+    ("other", r"\b(screw|nail|dowel|rivet|staple)"),
+)
+PREDEFINED: dict[str, BoltKind] = {
+    "ANCHORBOLT": "anchor", "BOLT": "bolt", "STUDSHEARCONNECTOR": "stud", "SHEARCONNECTOR": "stud",
+    "DOWEL": "other", "NAIL": "other", "NAILPLATE": "other", "RIVET": "other", "SCREW": "other", "STAPLE": "other",
+}  # fmt: skip
+AGREE = 0.12
+"""A stated and a measured diameter this near to one another are the same bolt (threads, facets)."""
+
+PLAUSIBLE = (5.0, 100.0)
+"""Between these diameters in mm a bolt of steelwork lies; common practice, no source."""
+
+
+class FastenerReader:
+    """Reads fastener elements. `grade_properties` are the property names that may hold a bolt's grade."""
+
+    def __init__(self, bodies: BodyReader, length_unit: float, grade_properties: tuple[str, ...]) -> None:
+        self._bodies = bodies
+        self._length = length_unit
+        self._grade_properties = grade_properties
+        self.conflicts: list[tuple[str, str]] = []
+
+    def read(self, element: Any) -> list[Bolt]:
+        """Return the bolts of one element: as many as its body shows, or one where it has none."""
+        kind, why = kind_of(element)
+        grade, origin = self._grade(element)
+        measured = self._measured(element)
+        nominal = [self._nominal(element, name) for name in ("NominalDiameter", "NominalLength")]
+        return [
+            self._bolt(element, index, (kind, why), (grade, origin), nominal, body)
+            for index, body in enumerate(measured or [None])
+        ]
+
+    def _measured(self, element: Any) -> list[BoltBody | None]:
+        try:
+            pieces = self._bodies.pieces(element)
+        except Unreadable:
+            try:
+                pieces = [PlacedPiece(Piece(solid_from_kernel(element)), np.eye(4))]
+            except Unreadable as reason:
+                self.conflicts.append((element.GlobalId, f"the bolt's body cannot be read: {reason}"))
+                return []
+        turned = [body for piece in pieces if (body := as_turned(piece)) is not None]
+        return list(bolts_of(turned))
+
+    def _bolt(
+        self,
+        element: Any,
+        index: int,
+        kind: tuple[BoltKind, str],
+        grade: tuple[str | None, Provenance | None],
+        nominal: list[tuple[Mm, str] | None],
+        body: BoltBody | None,
+    ) -> Bolt:
+        provenance: dict[str, Provenance] = {}
+        diameter, from_diameter = self._settle(element, "diameter", nominal[0], body.diameter if body else None)
+        length, from_length = self._settle_length(nominal[1], body)
+        for key, origin in (("diameter", from_diameter), ("length", from_length), ("grade", grade[1])):
+            if origin is not None:
+                provenance[key] = origin
+        point, direction = (body.point, body.direction) if body else self._axis_from_placement(element)
+        name = element.Name or element.is_a()
+        return Bolt(
+            element.GlobalId,
+            element.id(),
+            index,
+            name,
+            *kind,
+            point,
+            direction,
+            diameter,
+            length,
+            grade[0],
+            provenance,
+        )
+
+    def _settle(
+        self, element: Any, what: str, stated: tuple[Mm, str] | None, measured: Mm | None
+    ) -> tuple[Mm | None, Provenance | None]:
+        """Settle on the stated size where the body agrees, in whatever unit it was meant; else measure."""
+        if stated is None:
+            if measured is None:
+                return None, None
+            return measured, Provenance(source="measured", detail="from the bolt's shank")
+        value, origin = stated
+        for factor in (1.0, 1000.0, 25.4, 1 / self._length, 25.4 / self._length):
+            tried = value * factor
+            if measured is None and PLAUSIBLE[0] <= tried <= PLAUSIBLE[1]:
+                return tried, Provenance(source="read", detail=origin)
+            if measured is not None and abs(tried - measured) <= AGREE * measured:
+                return tried, Provenance(source="read", detail=f"{origin}, agrees with the shank")
+        if measured is None:
+            return None, None
+        self.conflicts.append(
+            (
+                element.GlobalId,
+                f"the stated {what} of {value:.1f} mm disagrees with the shank's {measured:.1f} mm",
+            )
+        )
+        return measured, Provenance(source="measured", detail=f"from the shank; {origin} says {value:.1f} mm")
+
+    def _settle_length(
+        self, stated: tuple[Mm, str] | None, body: BoltBody | None
+    ) -> tuple[Mm | None, Provenance | None]:
+        if body is None:
+            return (None, None) if stated is None else (stated[0], Provenance(source="read", detail=stated[1]))
+        if stated is not None and abs(stated[0] - body.length) <= AGREE * body.length:
+            return stated[0], Provenance(source="read", detail=f"{stated[1]}, agrees with the shank")
+        return body.length, Provenance(source="measured", detail="from the bolt's shank")
+
+    def _nominal(self, element: Any, name: str) -> tuple[Mm, str] | None:
+        """Return a stated size in mm, from the element, its type, or its name."""
+        for owner in (element, element_util.get_type(element)):
+            value = getattr(owner, name, None) if owner is not None else None
+            if value:
+                return float(value) * self._length, f"{owner.is_a()}.{name}"
+        return size_in_name(element, name)
+
+    def _grade(self, element: Any) -> tuple[str | None, Provenance | None]:
+        """Return the first text that names a grade this program knows, as it is written."""
+        for text, origin in self._grade_texts(element):
+            if text and bolt_grade(text) is not None:
+                return text, Provenance(source="read", detail=origin)
+        return None, None
+
+    def _grade_texts(self, element: Any) -> list[tuple[str, str]]:
+        texts = property_texts(element, self._grade_properties)
+        owner = element_util.get_type(element)
+        for each in (element, owner):
+            for name in ("Name", "Description", "ObjectType", "Tag", "ElementType"):
+                text = getattr(each, name, None) if each is not None else None
+                if text:
+                    texts.append((text, f"{each.is_a()}.{name}"))
+        texts += [(material.Name, "material") for material in element_util.get_materials(element) if material.Name]
+        return texts
+
+    def _axis_from_placement(self, element: Any) -> tuple[Array | None, Array | None]:
+        """Take the placement's z axis for a bolt without a body, as the schema's examples draw them."""
+        if element.ObjectPlacement is None:
+            return None, None
+        matrix = self._bodies.world_of(element)
+        return matrix[:3, 3], matrix[:3, 2]
+
+
+def kind_of(element: Any) -> tuple[BoltKind, str]:
+    """Tell bolts from anchors, studs and the rest: by predefined type, then by what the texts say."""
+    owner = element_util.get_type(element)
+    for each in (element, owner):
+        predefined = getattr(each, "PredefinedType", None) if each is not None else None
+        if predefined in PREDEFINED:
+            return PREDEFINED[predefined], f"predefined type {predefined}"
+    for each in (element, owner):
+        for name in ("ObjectType", "ElementType", "Description", "Name"):
+            text = getattr(each, name, None) if each is not None else None
+            for kind, words in KIND_WORDS:
+                if text and re.search(words, text, re.IGNORECASE):
+                    return kind, f'{name} "{text.strip()}"'
+    return "bolt", "no other kind named"
+
+
+def size_in_name(element: Any, name: str) -> tuple[Mm, str] | None:
+    """Read a size out of a name such as "M20x60 8.8" or "D=3/4 L=2 1/4 A325N"."""
+    for attribute in ("Name", "Description", "ObjectType"):
+        text = getattr(element, attribute, None) or ""
+        metric = re.search(r"\bM\s?(\d{1,2})(?!\d)(?:\s*[xX*]\s*(\d+))?", text)
+        if metric:
+            value = metric.group(1 if name == "NominalDiameter" else 2)
+            if value:
+                return float(value), f'{attribute} "{text}"'
+        inches = re.search(rf"\b{'D' if name == 'NominalDiameter' else 'L'}=(\d+ \d+/\d+|\d+/\d+|\d+)\b", text)
+        if inches:
+            return sum(_fraction(part) for part in inches.group(1).split()) * 25.4, f'{attribute} "{text}"'
+    return None
+
+
+def _fraction(text: str) -> float:
+    above, _, below = text.partition("/")
+    return float(above) / float(below or 1)

@@ -1,0 +1,85 @@
+"""Is this solid a plate? Its shape decides: two parallel faces with the whole body between them."""
+
+from __future__ import annotations
+
+import numpy as np
+import shapely
+
+from ..model.geometry import Frame, Indices, Prism, Solid
+from ..model.units import Array, Mm
+
+PARALLEL = 0.9999
+FULLNESS = 0.85
+"""The least share of outline × thickness that the body fills (bevelled edges take some away)."""
+
+SLENDERNESS = 0.7
+"""The most that a plate's thickness may be of its lesser side."""
+
+SOLIDITY = 0.42
+"""The least share of its bounding rectangle that a thick plate fills; a rolled section fills less."""
+
+THIN: Mm = 12.0
+"""Thinner than this, a plate may have any outline."""
+
+
+def as_plate(solid: Solid) -> Prism | None:
+    """Return the solid as a plate, or None. The thinnest direction that fits is its thickness."""
+    candidates = [prism for normal in _broad_normals(solid) if (prism := _between_faces(solid, normal))]
+    plates = [prism for prism in candidates if _looks_like_plate(prism)]
+    return min(plates, key=lambda prism: prism.thickness, default=None)
+
+
+def _broad_normals(solid: Solid) -> list[Array]:
+    """Return the normals of the three directions with the most face area."""
+    left = solid.areas.copy()
+    normals: list[Array] = []
+    while len(normals) < 3 and left.max() > 1e-6:
+        normal = solid.normals[int(np.argmax(left))]
+        normals.append(normal)
+        left[np.abs(solid.normals @ normal) > PARALLEL] = 0.0
+    return normals
+
+
+def _between_faces(solid: Solid, normal: Array) -> Prism | None:
+    low, high = solid.extent(normal)
+    thickness = high - low
+    if thickness < 1.0:
+        return None
+    level = max(0.05, 0.005 * thickness)
+    facing = np.abs(solid.normals @ normal) > PARALLEL
+    height = np.where(solid.normals @ normal > 0, solid.offsets, -solid.offsets)
+    caps = [np.flatnonzero(facing & (np.abs(height - end) < level)) for end in (low, high)]
+    areas = [float(solid.areas[cap].sum()) for cap in caps]
+    if min(areas) <= 0 or solid.volume < FULLNESS * max(areas) * thickness:
+        return None
+    cap = caps[int(areas[1] > areas[0])]
+    frame = Frame.from_z(low * normal, normal)
+    rings = _outline(solid, cap, frame)
+    return Prism(frame, rings[0], tuple(rings[1:]), thickness) if rings else None
+
+
+def _outline(solid: Solid, faces: Indices, frame: Frame) -> list[Array]:
+    """Return the rings of a cap, the outside first; a cap in several faces is joined."""
+    flat = frame.to_local(solid.vertices)[:, :2]
+    loops = [_face_loops(solid, flat, int(face)) for face in faces]
+    if len(loops) == 1:
+        return loops[0]
+    whole = shapely.union_all([shapely.Polygon(rings[0], rings[1:]).buffer(0) for rings in loops])
+    if not isinstance(whole, shapely.Polygon) or whole.is_empty:
+        return []
+    return [np.array(ring.coords)[:-1] for ring in (whole.exterior, *whole.interiors)]
+
+
+def _face_loops(solid: Solid, flat: Array, face: int) -> list[Array]:
+    ends = np.append(solid.loop_start[1:], len(solid.corners))
+    chosen = np.flatnonzero(solid.loop_face == face)
+    return [flat[solid.corners[solid.loop_start[loop] : ends[loop]]] for loop in chosen]
+
+
+def _looks_like_plate(prism: Prism) -> bool:
+    outline = shapely.Polygon(prism.outline)
+    box = np.array(shapely.oriented_envelope(outline).exterior.coords)
+    sides = np.linalg.norm(np.diff(box[:3], axis=0), axis=1)
+    if prism.thickness > SLENDERNESS * sides.min():
+        return False
+    return prism.thickness <= THIN or outline.area > SOLIDITY * sides[0] * sides[1]

@@ -1,0 +1,185 @@
+"""A whole model, from an open IFC file to parts, bolts and welds."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from pathlib import Path
+from typing import Any
+
+import numpy as np
+
+from ..model.audit import ModelFile
+from ..model.contents import Contents
+from ..model.findings import Problem
+from ..model.geometry import Frame, Prism
+from ..model.parts import Bolt, Hole, MemberName, MemberShape, Part, WeldPart
+from ..model.units import Array
+from ..settings import ReadingSettings
+from .bodies import BodyReader, Piece, PlacedPiece
+from .designations import read_designation
+from .fasteners import FastenerReader
+from .holes import hole_from_opening, holes_in_plate
+from .kernel import solid_from_kernel
+from .materials import read_grade
+from .members import as_member
+from .open_model import originating_system, sha256
+from .placements import Placements
+from .plates import as_plate
+from .properties import property_texts
+from .units import read_units
+from .unreadable import Unreadable
+from .welds import is_weld, read_weld
+
+NOT_STEELWORK = (
+    "IfcFeatureElement", "IfcFastener", "IfcMechanicalFastener", "IfcDistributionElement", "IfcFurnishingElement",
+    "IfcTransportElement", "IfcVirtualElement", "IfcReinforcingElement", "IfcWall", "IfcDoor", "IfcWindow",
+    "IfcCovering", "IfcCurtainWall", "IfcFooting", "IfcPile",
+)  # fmt: skip
+MARK_PROPERTIES = ("*.Reference", "*.Mark", "*.Piece mark", "*.Part mark", "*.Assembly mark")
+
+Progress = Callable[[str, float], None]
+
+
+def read_model(
+    file: Any, settings: ReadingSettings, path: Path | None = None, progress: Progress | None = None
+) -> Contents:
+    """Read an open IFC file. What is wrong with single elements is listed in `problems`, not raised."""
+    return _Reading(file, settings).contents(path, progress or (lambda _text, _share: None))
+
+
+class _Reading:
+    """One pass over one file."""
+
+    def __init__(self, file: Any, settings: ReadingSettings) -> None:
+        self.file = file
+        self.settings = settings
+        self.units = read_units(file)
+        self.bodies = BodyReader(self.units, Placements(self.units.length))
+        self.fasteners = FastenerReader(self.bodies, self.units.length, settings.bolt_grade_properties)
+        self.problems: list[Problem] = []
+        self.shapes: dict[Piece, tuple[Prism | None, MemberShape | None]] = {}
+        self.openings = self._openings()
+
+    def contents(self, path: Path | None, progress: Progress) -> Contents:
+        bolts: list[Bolt] = []
+        welds: list[WeldPart] = []
+        for element in self._sorted("IfcFastener", "IfcMechanicalFastener"):
+            if element.is_a("IfcMechanicalFastener"):
+                bolts += self._guarded(element, self.fasteners.read) or []
+            elif is_weld(element):
+                weld = self._guarded(element, lambda each: read_weld(each, self.bodies, self.units.length))
+                welds += [weld] if weld else []
+        progress("bolts read", 0.2)
+        elements = [each for each in self._sorted("IfcElement") if not any(map(each.is_a, NOT_STEELWORK))]
+        parts: list[Part] = []
+        for number, element in enumerate(elements):
+            part = self._guarded(element, self._part) if element.Representation is not None else None
+            parts += [part] if part else []
+            if number % 200 == 0:
+                progress("parts read", 0.2 + 0.8 * number / len(elements))
+        names = tuple(self._names(each) for each in elements)
+        self.problems += [Problem(element=who, message=what) for who, what in self.fasteners.conflicts]
+        problems = tuple(self.problems)
+        return Contents(self._model_file(path), tuple(parts), tuple(bolts), tuple(welds), names, problems)
+
+    def _sorted(self, *classes: str) -> list[Any]:
+        """Return elements in the file's order, each once."""
+        found: dict[int, Any] = {}
+        for name in classes:
+            found.update((each.id(), each) for each in self.file.by_type(name))
+        return [found[number] for number in sorted(found)]
+
+    def _guarded(self, element: Any, read: Callable[[Any], Any]) -> Any:
+        """Read one element; one that is broken is told of and left out, and the run goes on."""
+        try:
+            return read(element)
+        except Exception as error:
+            self._problem(element, f"{element.is_a()} left out: {' '.join(str(error).split())}")
+            return None
+
+    def _problem(self, element: Any, message: str) -> None:
+        self.problems.append(Problem(element=element.GlobalId or f"#{element.id()}", message=message))
+
+    def _part(self, element: Any) -> Part | None:
+        try:
+            pieces = self.bodies.pieces(element)
+        except Unreadable:
+            solid = solid_from_kernel(element)
+            pieces = [PlacedPiece(Piece(solid), np.eye(4))]
+        if not pieces:
+            return None
+        plate, member = self._shape(pieces)
+        grade, origin = read_grade(element, self.settings.steel_grade_properties)
+        designation = read_designation(element, pieces, self.settings.designation_properties) if member else None
+        return Part(
+            element.GlobalId,
+            element.id(),
+            element.is_a(),
+            element.Name or getattr(element, "Tag", None) or element.is_a(),
+            designation,
+            grade,
+            origin,
+            tuple(placed.in_world() for placed in pieces),
+            plate,
+            member,
+            tuple(self._holes(element, plate)),
+        )
+
+    def _shape(self, pieces: list[PlacedPiece]) -> tuple[Prism | None, MemberShape | None]:
+        """Tell plate from member by the largest solid; shapes that many elements share are judged once."""
+        main = max(pieces, key=lambda placed: placed.piece.solid.volume)
+        if main.piece not in self.shapes:
+            plate = as_plate(main.piece.solid)
+            self.shapes[main.piece] = plate, None if plate else as_member(main.piece)
+        plate, member = self.shapes[main.piece]
+        return plate and _plate_moved(plate, main.matrix), member and _member_moved(member, main.matrix)
+
+    def _holes(self, element: Any, plate: Prism | None) -> list[Hole]:
+        holes = holes_in_plate(plate) if plate else []
+        for opening in self.openings.get(element.id(), ()):
+            for placed in self._guarded(opening, self.bodies.pieces) or []:
+                hole = hole_from_opening(placed)
+                holes += [hole] if hole else []
+        return holes
+
+    def _openings(self) -> dict[int, list[Any]]:
+        found: dict[int, list[Any]] = {}
+        for relation in self.file.by_type("IfcRelVoidsElement"):
+            if relation.RelatingBuildingElement is not None and relation.RelatedOpeningElement is not None:
+                found.setdefault(relation.RelatingBuildingElement.id(), []).append(relation.RelatedOpeningElement)
+        return found
+
+    def _names(self, element: Any) -> MemberName:
+        texts = [element.Name, getattr(element, "Tag", None)]
+        texts += [text for text, _ in property_texts(element, MARK_PROPERTIES)]
+        return MemberName(element.GlobalId, tuple(dict.fromkeys(text for text in texts if text)))
+
+    def _model_file(self, path: Path | None) -> ModelFile:
+        return ModelFile(
+            path=str(path) if path else None,
+            sha256=sha256(path) if path else None,
+            schema_name=self.file.schema,
+            length_unit_mm=self.units.length,
+            originating_system=originating_system(self.file),
+        )
+
+
+def _plate_moved(plate: Prism, matrix: Array) -> Prism:
+    return Prism(_frame_moved(plate.frame, matrix), plate.outline, plate.holes, plate.thickness)
+
+
+def _frame_moved(frame: Frame, matrix: Array) -> Frame:
+    turn = matrix[:3, :3]
+    return Frame(turn @ frame.origin + matrix[:3, 3], frame.axes @ turn.T)
+
+
+def _member_moved(member: MemberShape, matrix: Array) -> MemberShape:
+    turn = matrix[:3, :3]
+    return MemberShape(
+        turn @ member.start + matrix[:3, 3],
+        turn @ member.axis,
+        turn @ member.depth,
+        member.length,
+        member.section,
+        member.stated,
+    )
