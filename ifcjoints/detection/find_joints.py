@@ -52,7 +52,7 @@ def find_joints(contents: Contents, settings: Settings) -> Found:
         bolts=len(contents.bolts),
         bolts_in_joints=len(in_joints),
         bolts_elsewhere=sum(each.count for each in elsewhere),
-        parts=len(contents.parts),
+        parts=contents.bodies,
     )
     if coverage.bolts != coverage.bolts_in_joints + coverage.bolts_elsewhere:
         raise AssertionError(f"bolts were lost: {coverage}")

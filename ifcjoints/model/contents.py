@@ -11,10 +11,11 @@ from .parts import Bolt, MemberName, Part, WeldPart
 
 @dataclass(frozen=True, slots=True, eq=False)
 class Contents:
-    """Everything that was read from one model."""
+    """Everything that was read from one model: the parts near bolts, out of `bodies` in all."""
 
     model: ModelFile
     parts: tuple[Part, ...]
+    bodies: int
     bolts: tuple[Bolt, ...]
     welds: tuple[WeldPart, ...]
     names: tuple[MemberName, ...]

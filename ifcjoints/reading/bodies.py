@@ -108,23 +108,26 @@ class BodyReader:
         return [PlacedPiece(Piece(self._shell(shell)), np.eye(4)) for shell in shells]
 
     def _shell(self, shell: Any) -> Solid:
+        """Read a shell. Attributes are taken by number: names cost half of reading a model of B-reps."""
         numbers: dict[int, int] = {}
         points: list[tuple[float, ...]] = []
         faces = []
-        for face in shell.CfsFaces:
+        for face in shell[0]:
+            bounds = face[0]
+            if len(bounds) > 1:
+                bounds = sorted(bounds, key=lambda bound: not bound.is_a("IfcFaceOuterBound"))
             loops = []
-            for bound in sorted(face.Bounds, key=lambda bound: not bound.is_a("IfcFaceOuterBound")):
-                if not bound.Bound.is_a("IfcPolyLoop"):
-                    raise Unreadable("its faces have curved edges")
+            for bound in bounds:
                 loop = []
-                for point in bound.Bound.Polygon:
+                for point in _polygon(bound[0]):
                     key = point.id()
-                    if key not in numbers:
-                        numbers[key] = len(points)
-                        points.append(point.Coordinates)
-                    loop.append(numbers[key])
+                    number = numbers.get(key)
+                    if number is None:
+                        number = numbers[key] = len(points)
+                        points.append(point[0])
+                    loop.append(number)
                 if len(loop) >= 3:
-                    loops.append(loop if bound.Orientation else loop[::-1])
+                    loops.append(loop if bound[1] else loop[::-1])
             if loops:
                 faces.append(loops)
         if len(faces) < 4:
@@ -151,6 +154,12 @@ class BodyReader:
         matrix = self._placements.operator(item.MappingTarget) @ self._placements.axes(source.MappingOrigin)
         inner = [piece for part in source.MappedRepresentation.Items for piece in self.item(part)]
         return _moved(inner, matrix)
+
+
+def _polygon(loop: Any) -> Any:
+    if loop.is_a() != "IfcPolyLoop":
+        raise Unreadable("its faces have curved edges")
+    return loop[0]
 
 
 def body_of(element: Any) -> Any | None:

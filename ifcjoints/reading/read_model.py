@@ -3,17 +3,19 @@
 from __future__ import annotations
 
 from collections.abc import Callable
+from functools import partial
 from pathlib import Path
 from typing import Any
 
 import numpy as np
+import shapely
 
 from ..model.audit import ModelFile
 from ..model.contents import Contents
 from ..model.findings import Problem
 from ..model.geometry import Frame, Prism
 from ..model.parts import Bolt, Hole, MemberName, MemberShape, Part, WeldPart
-from ..model.units import Array
+from ..model.units import Array, Mm
 from ..settings import ReadingSettings
 from .bodies import BodyReader, Piece, PlacedPiece
 from .designations import read_designation
@@ -36,6 +38,11 @@ NOT_STEELWORK = (
     "IfcCovering", "IfcCurtainWall", "IfcFooting", "IfcPile",
 )  # fmt: skip
 MARK_PROPERTIES = ("*.Reference", "*.Mark", "*.Piece mark", "*.Part mark", "*.Assembly mark")
+
+NEAR: Mm = 1000.0
+"""A part whose box lies farther than this from every bolt belongs to no joint: end plates are smaller."""
+
+CORNERS = np.array([[bool(number >> axis & 1) for axis in range(3)] for number in range(8)])
 
 Progress = Callable[[str, float], None]
 
@@ -71,16 +78,21 @@ class _Reading:
                 welds += [weld] if weld else []
         progress("bolts read", 0.2)
         elements = [each for each in self._sorted("IfcElement") if not any(map(each.is_a, NOT_STEELWORK))]
-        parts: list[Part] = []
+        bodies: list[tuple[Any, list[PlacedPiece]]] = []
         for number, element in enumerate(elements):
-            part = self._guarded(element, self._part) if element.Representation is not None else None
-            parts += [part] if part else []
+            pieces = self._guarded(element, self._pieces) if element.Representation is not None else None
+            bodies += [(element, pieces)] if pieces else []
             if number % 200 == 0:
-                progress("parts read", 0.2 + 0.8 * number / len(elements))
+                progress("bodies read", 0.2 + 0.6 * number / len(elements))
+        near = near_bolts([pieces for _, pieces in bodies], bolts)
+        opened = [body for body, is_near in zip(bodies, near, strict=True) if is_near]
+        parts = [part for each in opened if (part := self._guarded(each[0], partial(self._part, pieces=each[1])))]
+        progress("parts read", 1.0)
         names = tuple(self._names(each) for each in elements)
         self.problems += [Problem(element=who, message=what) for who, what in self.fasteners.conflicts]
         problems = tuple(self.problems)
-        return Contents(self._model_file(path), tuple(parts), tuple(bolts), tuple(welds), names, problems)
+        model = self._model_file(path)
+        return Contents(model, tuple(parts), len(bodies), tuple(bolts), tuple(welds), names, problems)
 
     def _sorted(self, *classes: str) -> list[Any]:
         """Return elements in the file's order, each once."""
@@ -100,14 +112,13 @@ class _Reading:
     def _problem(self, element: Any, message: str) -> None:
         self.problems.append(Problem(element=element.GlobalId or f"#{element.id()}", message=message))
 
-    def _part(self, element: Any) -> Part | None:
+    def _pieces(self, element: Any) -> list[PlacedPiece]:
         try:
-            pieces = self.bodies.pieces(element)
+            return self.bodies.pieces(element)
         except Unreadable:
-            solid = solid_from_kernel(element)
-            pieces = [PlacedPiece(Piece(solid), np.eye(4))]
-        if not pieces:
-            return None
+            return [PlacedPiece(Piece(solid_from_kernel(element)), np.eye(4))]
+
+    def _part(self, element: Any, pieces: list[PlacedPiece]) -> Part:
         plate, member = self._shape(pieces)
         grade, origin = read_grade(element, self.settings.steel_grade_properties)
         designation = read_designation(element, pieces, self.settings.designation_properties) if member else None
@@ -162,6 +173,30 @@ class _Reading:
             length_unit_mm=self.units.length,
             originating_system=originating_system(self.file),
         )
+
+
+def near_bolts(bodies: list[list[PlacedPiece]], bolts: list[Bolt]) -> Array:
+    """Return which bodies come near any bolt, by their boxes. Bodies far from all bolts are never opened."""
+    points = np.array([bolt.point for bolt in bolts if bolt.point is not None]).reshape(-1, 3)
+    boxes = np.array([_box(pieces) for pieces in bodies]).reshape(-1, 6)
+    near = np.zeros(len(boxes), bool)
+    tree = shapely.STRtree(shapely.points(points[:, :2]))
+    low, high = boxes[:, :3] - NEAR, boxes[:, 3:] + NEAR
+    body, bolt = tree.query(shapely.box(low[:, 0], low[:, 1], high[:, 0], high[:, 1]))
+    height = points[bolt, 2]
+    near[body[(height >= low[body, 2]) & (height <= high[body, 2])]] = True
+    return near
+
+
+def _box(pieces: list[PlacedPiece]) -> Array:
+    """Return a box that surely holds the pieces: from the corners of their own boxes."""
+    corners = []
+    for placed in pieces:
+        low, high = placed.piece.solid.bounds
+        own = np.where(CORNERS, high, low)
+        corners.append(own @ placed.matrix[:3, :3].T + placed.matrix[:3, 3])
+    every = np.vstack(corners)
+    return np.concatenate([every.min(axis=0), every.max(axis=0)])
 
 
 def _plate_moved(plate: Prism, matrix: Array) -> Prism:
