@@ -209,17 +209,16 @@ class Solid:
             return [np.empty(0) for _ in points]
         flat = self.vertices @ frame.axes[:2].T
         a, b = flat[self.corners[outer]], flat[self.next_corner[outer]]
-        face = self.corner_face[outer]
-        found = []
-        for point in points:
-            x, y = frame.axes[:2] @ point
-            upwards = (a[:, 1] > y) != (b[:, 1] > y)
-            at, to, owner = a[upwards], b[upwards], face[upwards]
-            right = at[:, 0] + (y - at[:, 1]) * (to - at)[:, 0] / (to - at)[:, 1] > x
-            inside = np.flatnonzero(np.bincount(owner[right], minlength=len(steepness)) % 2)
-            along = (self.offsets[inside] - self.normals[inside] @ point) / steepness[inside]
-            found.append(np.sort(along))
-        return found
+        face, count = self.corner_face[outer], len(steepness)
+        places = points @ frame.axes[:2].T
+        line, edge = np.nonzero((a[:, 1] > places[:, 1:]) != (b[:, 1] > places[:, 1:]))
+        at, to = a[edge], b[edge]
+        x, y = places[line].T
+        right = at[:, 0] + (y - at[:, 1]) * (to - at)[:, 0] / (to - at)[:, 1] > x
+        crossed = np.bincount(line[right] * count + face[edge[right]], minlength=len(points) * count)
+        line, inside = np.nonzero(crossed.reshape(-1, count) % 2)
+        along = (self.offsets[inside] - np.einsum("ij,ij->i", self.normals[inside], points[line])) / steepness[inside]
+        return [np.sort(along[line == number]) for number in range(len(points))]
 
 
 @dataclass(frozen=True, slots=True)
