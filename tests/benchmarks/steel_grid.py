@@ -91,9 +91,7 @@ class _Shared:
         self.beam_profile = self._profile("IPE 400", BEAM)
         self.at_origin = origin
         self.bolt_map = self._bolt_map()
-        self.operator = step.add(
-            f"IFCCARTESIANTRANSFORMATIONOPERATOR3D($,$,{step.point(0, 0, 0)},1.,$)"
-        )
+        self.operator = step.add(f"IFCCARTESIANTRANSFORMATIONOPERATOR3D($,$,{step.point(0, 0, 0)},1.,$)")
         self.members: list[str] = []
 
     def _profile(self, name: str, size: tuple[float, ...]) -> str:
@@ -109,7 +107,7 @@ class _Shared:
 
     def _bolt_map(self) -> str:
         step = self.step
-        shank = step.add(f"IFCCIRCLEPROFILEDEF(.AREA.,$,$,12.)")
+        shank = step.add("IFCCIRCLEPROFILEDEF(.AREA.,$,$,12.)")
         hexagon = [step.point(20.8 * math.cos(a), 20.8 * math.sin(a)) for a in (math.pi / 3 * k for k in range(6))]
         outline = step.add(f"IFCPOLYLINE(({','.join([*hexagon, hexagon[0]])}))")
         head_profile = step.add(f"IFCARBITRARYCLOSEDPROFILEDEF(.AREA.,$,{outline})")
@@ -153,7 +151,12 @@ class _Shared:
         )
 
     def _plate_brep(
-        self, centre: tuple[float, ...], size: tuple[float, ...], normal: str, holes: tuple[tuple[float, float], ...], name: str
+        self,
+        centre: tuple[float, ...],
+        size: tuple[float, ...],
+        normal: str,
+        holes: tuple[tuple[float, float], ...],
+        name: str,
     ) -> None:
         """Write a plate as a B-rep of its own; x across, y up, z along the normal, holes as inner bounds."""
         step, (b, h, t) = self.step, size
