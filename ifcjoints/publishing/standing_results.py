@@ -116,8 +116,13 @@ class StandingResults:
 
     def _remove_set(self, book: Any) -> None:
         """Remove a property set, its properties, and relations that would be left without it."""
-        for relation in self.file.get_inverse(book):
-            if relation.is_a("IfcRelationship") and any(value in (book, (book,)) for value in relation):
+        relations = [each for each in self.file.get_inverse(book) if each.is_a("IfcRelationship")]
+        if any(_in_definition_set(book, each) for each in relations):
+            # Such a set cannot be changed through the library: the standing one is handed over by name.
+            book.Name, book.Description = _label(f"Former {book.Name}"), None
+            return
+        for relation in relations:
+            if any(value in (book, (book,)) for value in relation):
                 self.file.remove(relation)
         former = book.HasProperties
         self.file.remove(book)
@@ -162,6 +167,12 @@ def _is_ours(entity: Any) -> bool:
     if entity.is_a("IfcPropertySet"):
         return (entity.Name or "").startswith((JOINT_SET, CHECK_PREFIX))
     return not entity.is_a("IfcGroup") or entity.ObjectType in GROUP_TYPES
+
+
+def _in_definition_set(book: Any, relation: Any) -> bool:
+    """Whether a relation holds a property set in an IfcPropertySetDefinitionSet together with others."""
+    definition = getattr(relation, "RelatingPropertyDefinition", None)
+    return definition is not None and definition != book
 
 
 def _say(values: Sequence[Any], properties: Properties) -> bool:
