@@ -40,9 +40,9 @@ def percent(value: float) -> str:
 def apart(value: float, limit: float) -> tuple[str, str]:
     """Write a figure and its limit with as many decimals as tell them apart, one at least."""
     for decimals in range(1, 10):
-        texts = f"{value:.{decimals}f}", f"{limit:.{decimals}f}"
+        texts = _signed(f"{value:.{decimals}f}"), _signed(f"{limit:.{decimals}f}")
         if texts[0] != texts[1] or value == limit:
-            return _signed(texts[0]), _signed(texts[1])
+            return texts
     return repr(value), repr(limit)
 
 

@@ -2,6 +2,9 @@
 
 from __future__ import annotations
 
+from dataclasses import dataclass
+
+from ..model.audit import Audit
 from ..model.joints import Joint
 from ..model.results import Result, Status
 
@@ -21,3 +24,30 @@ def governing_result(joint: Joint) -> Result | None:
     """Return the result with the highest utilisation, None where no action was given."""
     used = [result for result in joint.checks if result.utilisation is not None]
     return max(used, key=lambda result: result.utilisation or 0.0, default=None)
+
+
+@dataclass(frozen=True, slots=True)
+class Counts:
+    """What the head of a report and the summary count."""
+
+    joints: int
+    moment_joints: int
+    failing: int
+    not_checkable: int
+    assumed_inputs: int
+    bolts_elsewhere: int
+
+
+def count(audit: Audit) -> Counts:
+    """Count joints, and what in them needs a look. A joint may both fail and be not wholly checkable."""
+    joints = audit.joints
+    unchecked = [any(result.status == "not_checkable" for result in joint.checks) for joint in joints]
+    origins = [origin for joint in joints for origin in joint.provenance.values()]
+    return Counts(
+        joints=len(joints),
+        moment_joints=sum(joint.moment_joint for joint in joints),
+        failing=sum(joint_status(joint) == "fail" for joint in joints),
+        not_checkable=sum(unchecked),
+        assumed_inputs=sum(origin.source == "assumed" for origin in origins),
+        bolts_elsewhere=audit.coverage.bolts_elsewhere,
+    )

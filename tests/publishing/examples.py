@@ -44,6 +44,13 @@ def box(x: float, low: float, high: float) -> tuple[tuple[float, float], ...]:
     return ((-x, low), (x, low), (x, high), (-x, high))
 
 
+# IPE 400 without its root fillets, y from the bottom flange's centre line
+I_SECTION = (
+    (-90, -6.75), (90, -6.75), (90, 6.75), (4.3, 6.75), (4.3, 379.75), (90, 379.75),
+    (90, 393.25), (-90, 393.25), (-90, 379.75), (-4.3, 379.75), (-4.3, 6.75), (-90, 6.75),
+)  # fmt: skip
+
+
 def flange() -> Flange:
     return Flange(global_id=BEAM, part="member", width_mm=180, thickness_mm=13.5, inclination_deg=0, grade="S355")
 
@@ -86,9 +93,9 @@ def moment_joint(**fields: Any) -> Joint:
         ),
         "welds": (JointWeld(global_id=WELD, at="top flange", type="fillet", throat_mm=7), ),
         "front": (
-            Shape(global_id=COLUMN, role="column_flange", rings=(box(120, -400, 700),)),
             Shape(global_id=PLATE, role="end_plate", rings=(box(100, -86.5, 473.5),)),
-            Shape(global_id=BEAM, role="member_section", rings=(box(90, -6.75, 393.25), box(80, 6.75, 379.75))),
+            Shape(global_id=BEAM, role="member", rings=(I_SECTION,)),
+            Shape(global_id=COLUMN, role="carrier", rings=(box(120, -146.5, 533.5),)),
         ),
         "completeness": 0.857,
         "provenance": {
