@@ -31,6 +31,12 @@ def cross(first: Array, second: Array) -> Array:
     return np.array([b * z - c * y, c * x - a * z, a * y - b * x])
 
 
+def signed_area(ring: Array) -> float:
+    """Return a ring's (k, 2) area, positive if it turns left."""
+    x, y = ring.T
+    return 0.5 * float(x @ np.roll(y, -1) - y @ np.roll(x, -1))
+
+
 @dataclass(frozen=True, slots=True)
 class Frame:
     """A right-handed frame. `axes` (3, 3) holds the unit x, y and z axes as rows."""
@@ -85,7 +91,11 @@ class Solid:
 
     @classmethod
     def extruded(cls, rings: Sequence[Array], matrix: Array, along: Array) -> Solid:
-        """Sweep rings (k, 2), the outside first, along a vector of the frame `matrix` (4, 4)."""
+        """Sweep rings (k, 2), the outside first, along a vector of the frame `matrix` (4, 4).
+
+        Rings may turn either way: the outside is made to turn left, holes right, so that faces look outwards.
+        """
+        rings = [ring if (signed_area(ring) > 0) == (number == 0) else ring[::-1] for number, ring in enumerate(rings)]
         flat = np.vstack(rings)
         bottom = np.column_stack([flat, np.zeros(len(flat))])
         vertices = np.vstack([bottom, bottom + along]) @ matrix[:3, :3].T + matrix[:3, 3]
