@@ -89,9 +89,8 @@ def _trimmed(curve: Any, placements: Placements, angle_unit: float) -> list[Arra
     basis = curve.BasisCurve
     ends = [_trim_point(trim, placements) for trim in (curve.Trim1, curve.Trim2)]
     if basis.is_a("IfcLine"):
-        if ends[0] is None or ends[1] is None:
-            raise Unreadable("a line of a profile is trimmed by parameters")
-        return [ends[0], ends[1]]
+        trims = zip((curve.Trim1, curve.Trim2), ends, strict=True)
+        return [_along(basis, trim, placements) if point is None else point for trim, point in trims]
     if not basis.is_a("IfcCircle"):
         raise Unreadable(f"a profile's outline holds an {basis.is_a()}")
     matrix, radius = placements.axes(basis.Position), basis.Radius * placements.length
@@ -105,6 +104,13 @@ def _trimmed(curve: Any, placements: Placements, angle_unit: float) -> list[Arra
     turn = 1.0 if curve.SenseAgreement else -1.0
     sweep = turn * (((turn * (angles[1] - angles[0])) % math.tau) or math.tau)
     return _placed(arc(np.zeros(2), radius, angles[0], sweep), matrix)
+
+
+def _along(line: Any, trim: Any, placements: Placements) -> Array:
+    """Return the point of a line at a parameter, which counts the line's own vector."""
+    ratios = np.array(line.Dir.Orientation.DirectionRatios[:2], float)
+    vector = ratios / np.linalg.norm(ratios) * line.Dir.Magnitude * placements.length
+    return placements.point(line.Pnt)[:2] + _trim_parameter(trim) * vector
 
 
 def _trim_point(trim: Any, placements: Placements) -> Array | None:

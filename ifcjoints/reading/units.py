@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+from collections.abc import Iterator
 from dataclasses import dataclass
 from typing import Any
 
@@ -24,23 +25,34 @@ class Units:
 
 
 def read_units(file: Any) -> Units:
-    """Read the project's unit assignment; without one, lengths are in metres as the schema says for SI."""
-    found: dict[str, float] = {}
-    for assignment in file.by_type("IfcUnitAssignment"):
-        for unit in assignment.Units:
-            if unit.is_a("IfcNamedUnit"):
-                found.setdefault(unit.UnitType, _factor(unit))
-    length = found.get("LENGTHUNIT", 1.0) * 1000.0
-    if not (math.isfinite(length) and length > 0):
-        raise ModelError(f"the model's unit of length is {length} mm; a positive number is needed.")
-    return Units(length, found.get("PLANEANGLEUNIT", 1.0))
+    """Read the project's units; without a unit of length lengths are in metres, the SI unit.
+
+    Raises ModelError for a unit of length that is no length at all.
+    """
+    found: dict[str, Any] = {}
+    for unit in _assigned(file):
+        if unit is not None and unit.is_a("IfcNamedUnit"):
+            found.setdefault(unit.UnitType, unit)
+    metres = _factor(found["LENGTHUNIT"]) if "LENGTHUNIT" in found else 1.0
+    if metres is None or not (math.isfinite(metres) and metres > 0):
+        raise ModelError("the model's unit of length cannot be told; state it as an SI unit or with a conversion.")
+    radians = _factor(found["PLANEANGLEUNIT"]) if "PLANEANGLEUNIT" in found else 1.0
+    return Units(metres * 1000.0, radians or 1.0)
 
 
-def _factor(unit: Any) -> float:
-    """How many SI units (metres, radians) make one of this unit."""
+def _assigned(file: Any) -> Iterator[Any]:
+    """Yield the units of the project's own assignment first: a file may hold other assignments."""
+    projects = [project.UnitsInContext for project in file.by_type("IfcProject")]
+    for assignment in [each for each in projects if each is not None] or file.by_type("IfcUnitAssignment"):
+        yield from assignment.Units
+
+
+def _factor(unit: Any) -> float | None:
+    """How many SI units (metres, radians) make one of this unit; None where it does not say."""
     if unit.is_a("IfcSIUnit"):
         return SI_PREFIXES.get(unit.Prefix, 1.0)
-    if unit.is_a("IfcConversionBasedUnit"):
-        measure = unit.ConversionFactor
-        return float(measure.ValueComponent.wrappedValue) * _factor(measure.UnitComponent)
-    return 1.0
+    measure = unit.ConversionFactor if unit.is_a("IfcConversionBasedUnit") else None
+    if measure is None:
+        return None
+    inner = _factor(measure.UnitComponent)
+    return None if inner is None else float(measure.ValueComponent.wrappedValue) * inner
