@@ -110,7 +110,8 @@ def _along(line: Any, trim: Any, placements: Placements) -> Array:
     """Return the point of a line at a parameter, which counts the line's own vector."""
     ratios = np.array(line.Dir.Orientation.DirectionRatios[:2], float)
     vector = ratios / np.linalg.norm(ratios) * line.Dir.Magnitude * placements.length
-    return placements.point(line.Pnt)[:2] + _trim_parameter(trim) * vector
+    point: Array = placements.point(line.Pnt)[:2] + _trim_parameter(trim) * vector
+    return point
 
 
 def _trim_point(trim: Any, placements: Placements) -> Array | None:

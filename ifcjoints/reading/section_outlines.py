@@ -9,10 +9,23 @@ import numpy as np
 import shapely
 from shapely import affinity
 
+from ..model.joints import SectionShape
 from ..model.sections import SectionDimensions
 from ..model.units import Array, Mm
 
 Span = tuple[Mm, Mm]
+
+ALIKE: Mm = 0.3
+"""Thicknesses and radii that differ by less are one figure."""
+
+THICKNESS_AT_I, THICKNESS_AT_U = 0.25, 0.5
+"""Where tapered flanges have their nominal thickness, as a share of the width from the tip (from memory)."""
+
+TAPER = 0.002
+"""Flanges are parallel if their thickness grows by less than this share of the width over a twentieth of it."""
+
+ON_FACE: Mm = 0.02
+"""A corner this near to the web's face lies on it; the next corner of a finely faceted fillet does not."""
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -100,35 +113,62 @@ def _open_section(outline: shapely.Polygon, web: Span, width: tuple[Mm, Mm, Mm],
     plain = SectionDimensions("other", h, b)
     if tw > 0.6 * b or len(chord(outline, 1, (web[0] + web[1]) / 2)) != 1:
         return plain
-    sides = [
-        chord(outline, 1, (left + web[0]) / 2) if web[0] - left > 0.1 * b else [],
-        chord(outline, 1, (right + web[1]) / 2) if right - web[1] > 0.1 * b else [],
-    ]
-    flanges = [[span[1] - span[0] for span in side] for side in sides]
     middle_web = abs((web[0] + web[1]) / 2 - centre) < 0.02 * b + 0.5
-    thick = max((t for side in flanges for t in side), default=h) > 0.4 * h
+    from_tip = b * (THICKNESS_AT_I if middle_web else THICKNESS_AT_U)
+    sides = _flanges_at(outline, web, from_tip)
+    thick = max((span[1] - span[0] for side in sides for span in side), default=h) > 0.4 * h
     counts = () if thick else tuple(len(side) for side in sides)
     if counts == (2, 2) and middle_web:
-        tf = (flanges[0][0] + flanges[0][1] + flanges[1][0] + flanges[1][1]) / 4
-        return SectionDimensions("I", h, b, tw, tf, _root_radius(outline.area, h, b, (tw, tf), 4))
+        return _with_flanges("I", outline, web, from_tip)
     if counts == (1, 1) and middle_web and sides[0][0][1] > top - 0.02 * h:
-        tf = (flanges[0][0] + flanges[1][0]) / 2
-        return SectionDimensions("T", h, b, tw, tf, _root_radius(outline.area, h, b, (tw, tf), 2))
+        return _with_flanges("T", outline, web, from_tip)
     if counts == (0, 2):
-        tf = (flanges[1][0] + flanges[1][1]) / 2
-        return SectionDimensions("U", h, b, tw, tf, _root_radius(outline.area, h, b, (tw, tf), 2, 2))
+        return _with_flanges("U", outline, web, from_tip)
     if counts == (0, 1) and sides[1][0][0] < bottom + 0.02 * h:
-        return SectionDimensions("L", h, b, tw, flanges[1][0])
+        return _with_flanges("L", outline, web, from_tip)
     return plain
 
 
-def _root_radius(area: float, h: Mm, b: Mm, thickness: tuple[Mm, Mm], roots: int, flanges: int = 0) -> Mm | None:
-    """Return the root radius that makes up the area the plates alone lack; each root adds (1 − π/4) r²."""
-    tw, tf = thickness
-    count = flanges or (2 if roots == 4 else 1)
-    excess = area - (count * b * tf + (h - count * tf) * tw)
-    radius = math.sqrt(max(excess, 0.0) / (roots * (1 - math.pi / 4)))
-    return radius if radius > 1.0 else None
+def _with_flanges(shape: SectionShape, outline: shapely.Polygon, web: Span, from_tip: Mm) -> SectionDimensions:
+    """Return the dimensions; flanges of two thicknesses leave `tf` unknown, tapered ones and unlike fillets `r`."""
+    left, bottom, right, top = outline.bounds
+    b = right - left
+    here, inwards = (_flanges_at(outline, web, from_tip + shift) for shift in (0.0, 0.05 * b))
+    thicknesses, deeper = (np.array([top - low for side in sides for low, top in side]) for sides in (here, inwards))
+    parallel = len(deeper) == len(thicknesses) and float(np.abs(deeper - thicknesses).max()) < TAPER * b
+    tf = float(np.mean(thicknesses)) if np.ptp(thicknesses) < ALIKE else None
+    r = _root_radius(outline, web, here) if parallel else None
+    return SectionDimensions(shape, top - bottom, b, web[1] - web[0], tf, r)
+
+
+def _flanges_at(outline: shapely.Polygon, web: Span, from_tip: Mm) -> list[list[Span]]:
+    """Return the flanges' spans left and right of the web, cut at a distance from their tips."""
+    left, _, right, _ = outline.bounds
+    stands_out = 0.1 * (right - left)
+    return [
+        chord(outline, 1, left + from_tip) if web[0] - left > stands_out else [],
+        chord(outline, 1, right - from_tip) if right - web[1] > stands_out else [],
+    ]
+
+
+def _root_radius(outline: shapely.Polygon, web: Span, sides: list[list[Span]]) -> Mm | None:
+    """Return the root fillets' radius: from where the web's flat face ends to the flange, the same at every root.
+
+    The corners of a faceted fillet lie on the true arc, and its tangent point is one of them; the area of a
+    faceted fillet is larger than the true one, so that the radius cannot be had from the area.
+    """
+    points = np.array(outline.exterior.coords)
+    middle = (outline.bounds[1] + outline.bounds[3]) / 2
+    found = []
+    for face, side in zip(web, sides, strict=True):
+        flat = points[np.abs(points[:, 0] - face) < ON_FACE, 1]
+        for low, high in side:
+            upper = low > middle
+            inner = low if upper else high
+            reach = flat[flat < inner + ON_FACE] if upper else flat[flat > inner - ON_FACE]
+            found.append(abs(inner - (reach.max() if upper else reach.min())) if len(reach) else 0.0)
+    radius = float(np.mean(found))
+    return radius if radius > 1.0 and np.ptp(found) < ALIKE else None
 
 
 def _round(outline: shapely.Polygon, b: Mm, h: Mm) -> SectionDimensions | None:
