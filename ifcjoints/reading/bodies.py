@@ -1,7 +1,7 @@
 """An element's body as solids, read straight from its entities.
 
-Swept solids, mapped items, planar B-reps and face sets are read here; anything else is Unreadable and
-left to the geometry kernel. Every shape that many elements share is read once.
+Swept solids, their ends clipped or not, mapped items, planar B-reps and face sets are read here; any other item
+is left to the geometry kernel. Every shape that many elements share is read once.
 """
 
 from __future__ import annotations
@@ -14,6 +14,8 @@ import numpy as np
 
 from ..model.geometry import Frame, Solid
 from ..model.units import Array, Mm
+from .clippings import end_clipped, first_operand, half_space
+from .kernel import solid_of_item
 from .placements import Placements, is_rigid
 from .profiles import Profile, read_profile
 from .units import Units
@@ -36,10 +38,14 @@ class Sweep:
 
 @dataclass(frozen=True, slots=True, eq=False)
 class Piece:
-    """One solid in the axes it was written in, and its sweep if it was extruded."""
+    """One solid in the axes it was written in, and its sweep if it was extruded.
+
+    `cut_from` is the extrusion that clippings made the solid from: its section stands, its ends do not.
+    """
 
     solid: Solid
     sweep: Sweep | None = None
+    cut_from: Sweep | None = None
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -70,6 +76,8 @@ class BodyReader:
             "IfcPolygonalFaceSet": self._polygonal,
             "IfcTriangulatedFaceSet": self._triangulated,
             "IfcMappedItem": self._mapped,
+            "IfcBooleanClippingResult": self._clipped,
+            "IfcBooleanResult": self._clipped,
         }
 
     def pieces(self, element: Any) -> list[PlacedPiece]:
@@ -88,11 +96,30 @@ class BodyReader:
         """Return one representation item's solids in its own axes."""
         number = item.id()
         if number not in self._known:
-            reader = self._kinds.get(item.is_a())
-            if reader is None:
-                raise Unreadable(f"its body is an {item.is_a()}")
-            self._known[number] = reader(item)
+            reader = self._kinds.get(item.is_a(), self._from_kernel)
+            try:
+                self._known[number] = reader(item)
+            except Unreadable:
+                self._known[number] = self._from_kernel(item)
         return self._known[number]
+
+    def _from_kernel(self, item: Any) -> list[PlacedPiece]:
+        base = first_operand(item)
+        cut_from = None
+        if base is not None and base.is_a() == "IfcExtrudedAreaSolid":
+            (placed,) = self.item(base)
+            cut_from = placed.piece.sweep
+        return [PlacedPiece(Piece(solid_of_item(item), cut_from=cut_from), np.eye(4))]
+
+    def _clipped(self, item: Any) -> list[PlacedPiece]:
+        """Read an extrusion whose ends half-spaces have cut; Unreadable for cuts of any other kind."""
+        base = self.item(item.FirstOperand)
+        half = half_space(item.SecondOperand, self._placements) if item.Operator == "DIFFERENCE" else None
+        sweep = (base[0].piece.sweep or base[0].piece.cut_from) if len(base) == 1 else None
+        if half is None or sweep is None:
+            raise Unreadable(f"its body is an {item.is_a()}")
+        solid = end_clipped(base[0].piece.solid, sweep.along, half)
+        return [PlacedPiece(Piece(solid, cut_from=sweep), np.eye(4))]
 
     def _extruded(self, item: Any) -> list[PlacedPiece]:
         profile = read_profile(item.SweptArea, self._placements, self._angle)

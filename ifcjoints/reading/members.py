@@ -21,19 +21,23 @@ SLENDER = 0.5
 
 def as_member(piece: Piece) -> MemberShape | None:
     """Return the piece as a member in its own axes, or None."""
-    if piece.sweep is not None and piece.sweep.profile.dimensions is not None:
-        return _stated(piece.sweep)
+    sweep = piece.sweep or piece.cut_from
+    if sweep is not None and sweep.profile.dimensions is not None:
+        return _stated(piece.solid, sweep)
     axis = _long_axis(piece.solid)
     return _measured(piece.solid, axis) if axis is not None else None
 
 
-def _stated(sweep: Sweep) -> MemberShape | None:
-    """Read a member from an extruded parametric profile."""
+def _stated(solid: Solid, sweep: Sweep) -> MemberShape | None:
+    """Read a member from an extruded parametric profile; clippings may have moved its ends."""
     section = sweep.profile.dimensions
-    if section is None or section.shape == "rectangle" or sweep.length < SLENDER * min(section.h, section.b):
-        return None
     own = sweep.plane if sweep.profile.placed is None else sweep.plane @ sweep.profile.placed
-    return MemberShape(own[:3, 3], unit(sweep.along), unit(own[:3, 1]), sweep.length, section, stated=True)
+    axis = unit(sweep.along)
+    low, high = solid.extent(axis)
+    if section is None or section.shape == "rectangle" or high - low < SLENDER * min(section.h, section.b):
+        return None
+    start = own[:3, 3] + (low - own[:3, 3] @ axis) * axis
+    return MemberShape(start, axis, unit(own[:3, 1]), high - low, section, stated=True)
 
 
 def _long_axis(solid: Solid) -> Array | None:
