@@ -18,7 +18,7 @@ from ..model.audit import Audit
 from ..model.findings import Finding
 from . import figures, words
 from .drawing import draw
-from .verdict import count, governing_result, joint_status
+from .verdict import count, decisive, governing_result, in_short, joint_status
 
 _SUBSCRIPT = re.compile(r"(?<![A-Za-z0-9_])([A-Za-zΑ-ω]+)_([A-Za-z0-9]+(?:,[A-Za-z0-9]+)*)")
 
@@ -35,6 +35,8 @@ def render_report(audit: Audit) -> str:
         audit=audit,
         name=PurePath(audit.model.path).name if audit.model.path else "an open model",
         counts=count(audit),
+        in_short=in_short(audit),
+        anchor={joint.id: f"joint-{number}" for number, joint in enumerate(audit.joints, 1)},
         settings=list(flattened(audit.settings)),
         words=words,
     )
@@ -57,6 +59,7 @@ def _environment() -> Environment:
         resistances=resistances,
         against_limit=against_limit,
         governing=governing_result,
+        decisive=decisive,
         status=joint_status,
         drawing=lambda joint: Markup(draw(joint)),
     )

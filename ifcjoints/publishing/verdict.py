@@ -26,6 +26,23 @@ def governing_result(joint: Joint) -> Result | None:
     return max(used, key=lambda result: result.utilisation or 0.0, default=None)
 
 
+def decisive(joint: Joint) -> str:
+    """Say what a joint's status rests on: the failing or governing check, else the first error finding."""
+    errors = [finding for finding in joint.findings if finding.severity == "error"]
+    result = governing_result(joint)
+    if errors and (result is None or result.status != "fail"):
+        more = f" and {len(errors) - 1} more" if len(errors) > 1 else ""
+        return f"{errors[0].code}{more}"
+    return f"{result.check}: {result.governing}" if result else ""
+
+
+def in_short(audit: Audit) -> tuple[Joint, ...]:
+    """Return the joints that a summary must name: every moment joint, then any other that fails."""
+    moment_joints = [joint for joint in audit.joints if joint.moment_joint]
+    others = [joint for joint in audit.joints if not joint.moment_joint and joint_status(joint) == "fail"]
+    return (*moment_joints, *others)
+
+
 @dataclass(frozen=True, slots=True)
 class Counts:
     """What the head of a report and the summary count."""
