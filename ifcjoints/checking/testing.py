@@ -1,0 +1,126 @@
+"""For packs and their tests: joints from plain figures, and a runner for the cases a check carries.
+
+@pytest.mark.parametrize("case", elastic.cases, ids=lambda case: case.title)
+def test_case(case):
+    run_case(elastic, case)
+"""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from typing import Literal
+
+from ..model.actions import Action, FlangeSide, Forces
+from ..model.basis import EDITIONS, Basis, StandardName
+from ..model.joints import Flange, Interface, Joint, JointBolts, JointMember, JointPlate, Provenance, Row, Section
+from ..model.results import Result
+from ..model.units import Mm
+from .contract import Case, Check, Subject
+from .runner import run_check
+
+PLAIN_ROWS: tuple[tuple[Mm, int], ...] = ((450.0, 2), (340.0, 2), (60.0, 2))
+
+
+def plain_joint(
+    rows: Sequence[tuple[Mm, int]] = PLAIN_ROWS,
+    *,
+    flange_distance: Mm = 390.0,
+    flange: tuple[Mm, Mm] = (180.0, 13.5),
+    flange_grade: str | None = "S355",
+    inclinations: tuple[float, float] = (0.0, 0.0),
+    bolt: tuple[Mm | None, str | None] = (24.0, "8.8"),
+    plate_thickness: Mm = 20.0,
+    plate_grade: str | None = "S355",
+) -> Joint:
+    """Build a moment joint from plain figures.
+
+    `rows` are (y from the bottom flange's centre line, bolts), top to bottom; `flange` is (width, thickness) of
+    both flanges, `inclinations` the bottom and the top flange's angle in degrees; `bolt` (diameter, grade).
+    """
+    given = Provenance(source="given", detail="plain figures")
+    width, thickness = flange
+    flanges = [
+        Flange(
+            global_id="member", part="member", width_mm=width, thickness_mm=thickness, inclination_deg=angle,
+            grade=flange_grade,
+        )
+        for angle in inclinations
+    ]  # fmt: skip
+    section = Section(designation=None, shape="I", h_mm=flange_distance + thickness, b_mm=width, tf_mm=thickness)
+    return Joint(
+        id="J-PLAIN",
+        name="plain joint",
+        configuration="beam_to_column_flange",
+        moment_joint=True,
+        why="made from plain figures",
+        family="F01",
+        supported=JointMember(global_id="member", name="beam", end="start", section=section, grade=flange_grade),
+        supporting=None,
+        plates=(_plate(plate_thickness, width, flange_distance, plate_grade),),
+        bolts=JointBolts(
+            global_ids=("bolts",), count=sum(count for _, count in rows), diameter_mm=bolt[0], grade=bolt[1],
+            hole_diameter_mm=None, grip_mm=None,
+        ),
+        rows=tuple(_row(y, count, flange_distance) for y, count in rows),
+        interface=Interface(
+            origin_mm=(0.0, 0.0, 0.0), normal=(1.0, 0.0, 0.0), up=(0.0, 0.0, 1.0), across=(0.0, -1.0, 0.0),
+            flange_distance_mm=flange_distance, axis_y_mm=flange_distance / 2, bottom=flanges[0], top=flanges[1],
+        ),
+        completeness=1.0,
+        provenance={"rows": given, "bolts.diameter": given, "bolts.grade": given},
+    )  # fmt: skip
+
+
+def _plate(thickness: Mm, width: Mm, depth: Mm, grade: str | None) -> JointPlate:
+    return JointPlate(
+        global_id="plate", role="end_plate", thickness_mm=thickness, width_mm=width, depth_mm=depth + 200.0, grade=grade
+    )
+
+
+def _row(y: Mm, count: int, flange_distance: Mm) -> Row:
+    position: Literal["outside_top", "between", "outside_bottom"] = "between"
+    if y > flange_distance or y < 0:
+        position = "outside_top" if y > 0 else "outside_bottom"
+    return Row(y_bottom_mm=y, y_top_mm=flange_distance - y, count=count, gauge_mm=110.0, position=position)
+
+
+def plain_subject(
+    joint: Joint,
+    forces: tuple[float, float, float] | None = None,
+    *,
+    tension_flange: FlangeSide = "top",
+    standard: StandardName = "EN 1993-1-8",
+) -> Subject:
+    """Ask about a joint under `forces` (N kN, V kN, M kNm), or about its resistance where there are none."""
+    action = None
+    if forces is not None:
+        N_kN, V_kN, M_kNm = forces
+        action = Action(case="LC1", forces=Forces(N_kN=N_kN, V_kN=V_kN, M_kNm=M_kNm), source="plain figures")
+        tension_flange = action.tension_flange
+    return Subject(joint, tension_flange, action, Basis(standard=standard, edition=EDITIONS[standard]))
+
+
+def example_cases() -> tuple[Case, ...]:
+    """Return a case that passes, one that fails and one that cannot be checked, for any check of bolt rows."""
+    return (
+        Case("a light moment passes", plain_subject(plain_joint(), (0.0, 50.0, 60.0)), "pass"),
+        Case("a moment far beyond the bolts fails", plain_subject(plain_joint(), (0.0, 50.0, 900.0)), "fail"),
+        Case(
+            "bolts without a grade cannot be checked",
+            plain_subject(plain_joint(bolt=(24.0, None)), (0.0, 50.0, 60.0)),
+            "not_checkable",
+            missing="grade",
+        ),
+    )
+
+
+def run_case(check: Check, case: Case) -> Result:
+    """Run one case of a check; AssertionError says how it did not end as it should."""
+    result = run_check(check, case.subject)
+    if result.status != case.expect:
+        raise AssertionError(
+            f'{check.name}, "{case.title}": ended as {result.status}, not {case.expect} ({result.reason})'
+        )
+    if case.missing not in result.reason:
+        raise AssertionError(f'{check.name}, "{case.title}": the reason does not name {case.missing}: {result.reason}')
+    return result
