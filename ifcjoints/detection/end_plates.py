@@ -129,4 +129,6 @@ def _standing_area(part: Part, frame: Frame, height: Mm, outline: shapely.Polygo
     """Return the area a part covers just above the plate, if it stands on the plate at all."""
     above = Frame(frame.origin + height * frame.axes[2], frame.axes)
     area = shapely.union_all([cut_area(solid, above) for solid in part.solids])
+    if part.notches:
+        area = area.difference(shapely.union_all([cut_area(solid, above) for solid in part.notches]))
     return area if area.intersects(outline) else shapely.Polygon()

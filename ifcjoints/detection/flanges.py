@@ -6,6 +6,7 @@ import math
 from collections.abc import Sequence
 from dataclasses import dataclass
 
+import numpy as np
 import shapely
 
 from ..model.geometry import cross, unit
@@ -15,7 +16,11 @@ from ..reading.section_outlines import chord
 from .end_plates import EndConnection
 
 MID_OUTSTAND = 0.25
-"""Flanges are looked for a quarter of the width (and half the half-web) to either side of the web."""
+"""Flanges are looked for a quarter of the width and of the web out from the web's middle: half-way to their tips."""
+
+ON_FACE: Mm = 0.05
+LEAST_FACING = 0.5
+"""A flange's face looks along the interface's y axis with at least this cosine."""
 
 LEAST_WIDTH = 0.5
 """A haunch's flange is at least this share of the member's width."""
@@ -57,15 +62,27 @@ def outer_flanges(connection: EndConnection, parts: Sequence[Part]) -> tuple[Fla
         return None
     own = connection.cuts[connection.member]
     left, _, right, _ = own.bounds
-    middle, offset = (left + right) / 2, MID_OUTSTAND * (right - left) + section.tw / 4
+    sides = _outstands(own, section.tw)
     bands = [
         band
         for part, area in connection.cuts.items()
-        for band in _bands(connection, parts, part, area, (middle - offset, middle + offset))
+        for band in _bands(connection, parts, part, area, sides)
         if band.width >= LEAST_WIDTH * (right - left)
     ]
     bands.sort(key=lambda band: band.y)
     return (bands[0], bands[-1]) if len(bands) >= 2 else None
+
+
+def _outstands(own: shapely.Polygon | shapely.MultiPolygon, tw: Mm) -> tuple[Mm, Mm]:
+    """Return two places across where only flanges are met: on either side of the web, or both beside a channel's."""
+    left, bottom, right, top = own.bounds
+    b, middle = right - left, (left + right) / 2
+    web = chord(own, 0, (bottom + top) / 2)
+    if len(web) == 1 and abs(web[0][0] + web[0][1] - 2 * middle) > 0.5 * b:
+        tip, way = (right, -1.0) if web[0][0] - left < right - web[0][1] else (left, 1.0)
+        return tip + way * 0.5 * b, tip + way * 0.25 * b
+    offset = MID_OUTSTAND * b + tw / 4
+    return middle - offset, middle + offset
 
 
 def _bands(
@@ -79,9 +96,8 @@ def _bands(
     run = _run_of(parts[part], connection)
     if run is None:
         return []
-    normal, y_axis = connection.frame.axes[2], connection.frame.axes[1]
-    slope = float(run @ y_axis) / float(run @ normal)
-    angle = math.acos(min(1.0, abs(float(run @ normal))))
+    across_axis, y_axis, normal = connection.frame.axes
+    aside, straight = float(run @ across_axis) / float(run @ normal), float(run @ y_axis) / float(run @ normal)
     found = []
     for low, high in chord(area, 1, sides[0]):
         for low_other, high_other in chord(area, 1, sides[1]):
@@ -89,7 +105,9 @@ def _bands(
                 continue
             middle = (low + high + low_other + high_other) / 4
             across = chord(area, 0, middle)
+            slope = _slope(parts[part], connection, (sides[0], low), (sides[0], high), straight)
             y = middle - slope * connection.cut_at
+            angle = math.acos(1.0 / math.hypot(1.0, aside, slope))
             thickness = _thickness(parts[part], (high - low) * abs(math.cos(math.atan(slope))))
             found.append(FlangeBand(part, y, low, high, across[0][0], across[-1][1], thickness, math.degrees(angle)))
     return found
@@ -98,6 +116,24 @@ def _bands(
 def _is_thin(height: Mm, area: shapely.Polygon | shapely.MultiPolygon) -> bool:
     left, _, right, _ = area.bounds
     return bool(height < 0.5 * (right - left))
+
+
+def _slope(part: Part, connection: EndConnection, lower: tuple[Mm, Mm], upper: tuple[Mm, Mm], straight: float) -> float:
+    """Return the rise of a flange along the plate's normal: its faces' own, for it need not follow the axis.
+
+    `lower` and `upper` are points (x, y) of its two faces where it was cut. A stated section's flange is straight.
+    """
+    if part.member is None or part.member.stated:
+        return straight
+    frame = connection.frame
+    slopes = []
+    for x, y in (lower, upper):
+        point = frame.to_world(np.array([x, y, connection.cut_at]))
+        for solid in part.solids:
+            facing = solid.normals @ frame.axes.T
+            here = (np.abs(solid.normals @ point - solid.offsets) < ON_FACE) & (np.abs(facing[:, 1]) > LEAST_FACING)
+            slopes += (-facing[here, 2] / facing[here, 1]).tolist()
+    return float(np.median(slopes)) if slopes else straight
 
 
 def _run_of(part: Part, connection: EndConnection) -> Array | None:

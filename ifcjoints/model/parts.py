@@ -54,7 +54,10 @@ class Hole:
 
 @dataclass(frozen=True, slots=True, eq=False)
 class Part:
-    """An element with a body. It is a plate, a member, or neither; `grade` is as the model writes it."""
+    """An element with a body. It is a plate, a member, or neither; `grade` is as the model writes it.
+
+    `solids` have their holes and notches filled; `notches` are the openings that are no drilled holes.
+    """
 
     global_id: str
     step_id: int
@@ -67,6 +70,7 @@ class Part:
     plate: Prism | None
     member: MemberShape | None
     holes: tuple[Hole, ...] = ()
+    notches: tuple[Solid, ...] = ()
 
     @property
     def bounds(self) -> tuple[Array, Array]:

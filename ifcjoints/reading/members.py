@@ -1,19 +1,26 @@
-"""Is this solid a member? Its axis is where most of its edges run; its section is cut across that."""
+"""Is this body a member? Its axis is where most of its edges run; its section is cut across that."""
 
 from __future__ import annotations
+
+from collections.abc import Sequence
 
 import numpy as np
 import shapely
 
 from ..model.geometry import Frame, Solid, unit
 from ..model.parts import MemberShape
-from ..model.units import Array
+from ..model.units import Array, Mm
 from .bodies import Piece, Sweep
-from .cuts import cut_area
-from .section_outlines import measure_outline
+from .cuts import Area, cut_area
+from .section_outlines import MeasuredSection, measure_outline
 
 STATIONS = (0.5, 0.25, 0.75, 0.1, 0.9)
 """Where along a body its section is looked for; copes and holes take from some of them."""
+
+BUILT_UP = ("I", "U", "T", "hollow_rectangular")
+
+SEAM: Mm = 0.05
+"""Plates of a built-up section that are nearer than twice this touch."""
 
 SLENDER = 0.5
 """A member is at least this many times as long as the lesser side of its section."""
@@ -25,7 +32,14 @@ def as_member(piece: Piece) -> MemberShape | None:
     if sweep is not None and sweep.profile.dimensions is not None:
         return _stated(piece.solid, sweep)
     axis = _long_axis(piece.solid)
-    return _measured(piece.solid, axis) if axis is not None else None
+    return _measured([piece.solid], axis) if axis is not None else None
+
+
+def as_built_up(solids: Sequence[Solid]) -> MemberShape | None:
+    """Return web and flanges, given as solids of their own, as one member; None if they make no section."""
+    axis = _long_axis(max(solids, key=lambda solid: solid.volume))
+    member = _measured(solids, axis) if axis is not None else None
+    return member if member is not None and member.section.shape in BUILT_UP else None
 
 
 def _stated(solid: Solid, sweep: Sweep) -> MemberShape | None:
@@ -57,31 +71,67 @@ def _long_axis(solid: Solid) -> Array | None:
     return candidates[int(np.argmin(across))] if candidates else None
 
 
-def _measured(solid: Solid, axis: Array) -> MemberShape | None:
-    low, high = solid.extent(axis)
-    outline, frame = _fullest_cut(solid, axis, low, high)
-    if outline is None:
+def _measured(solids: Sequence[Solid], axis: Array) -> MemberShape | None:
+    """Measure a member; a tapered one a second time, square to the axis that the first time found."""
+    member = _measured_along(solids, axis)
+    if member is not None and member.axis @ axis < 1 - 1e-9:
+        return _measured_along(solids, member.axis)
+    return member
+
+
+def _measured_along(solids: Sequence[Solid], axis: Array) -> MemberShape | None:
+    extents = [solid.extent(axis) for solid in solids]
+    low, high = min(extent[0] for extent in extents), max(extent[1] for extent in extents)
+    frame = Frame.from_z(np.zeros(3), axis)
+    cuts = {share: _cut(solids, frame, low + (high - low) * (share + 1e-4)) for share in STATIONS}
+    whole = {share: area for share, area in cuts.items() if isinstance(area, shapely.Polygon) and not area.is_empty}
+    if not whole:
         return None
+    outline = _fullest(whole)
     measured = measure_outline(outline)
     section = measured.dimensions
     if section.shape == "rectangle" or high - low < SLENDER * min(section.h, section.b):
         return None
-    if solid.volume < 0.4 * outline.area * (high - low):
+    if sum(solid.volume for solid in solids) < 0.4 * outline.area * (high - low):
         return None
-    start = frame.to_world(measured.middle)
-    start = start + (low - start @ axis) * axis
+    middle, run = _middle_line(whole, measured, frame, high - low)
     depth = measured.depth @ frame.axes[:2]
-    return MemberShape(start, axis, depth, high - low, section, stated=False)
+    start = frame.to_world(middle) + (low - frame.to_world(middle) @ axis) * axis
+    if run is None:
+        return MemberShape(start, axis, depth, high - low, section, stated=False)
+    upright = unit(depth - (depth @ run) * run)
+    return MemberShape(start, run, upright, (high - low) / float(run @ axis), section, stated=False)
 
 
-def _fullest_cut(solid: Solid, axis: Array, low: float, high: float) -> tuple[shapely.Polygon | None, Frame]:
-    """Cut at several stations; return the cut with the greatest area that is one piece."""
-    best: shapely.Polygon | None = None
-    frame = Frame.from_z(np.zeros(3), axis)
-    chosen = frame
-    for share in STATIONS:
-        there = Frame(axis * (low + (high - low) * (share + 1e-4)), frame.axes)
-        area = cut_area(solid, there)
-        if isinstance(area, shapely.Polygon) and not area.is_empty and (best is None or area.area > best.area * 1.001):
-            best, chosen = area, there
-    return best, chosen
+def _cut(solids: Sequence[Solid], frame: Frame, height: Mm) -> Area:
+    there = Frame(frame.axes[2] * height, frame.axes)
+    areas = [cut_area(solid, there) for solid in solids]
+    return areas[0] if len(areas) == 1 else shapely.union_all([area.buffer(SEAM) for area in areas]).buffer(-SEAM)
+
+
+def _fullest(cuts: dict[float, shapely.Polygon]) -> shapely.Polygon:
+    """Return the cut with the greatest area; of nearly equal ones the first."""
+    best = next(iter(cuts.values()))
+    for area in cuts.values():
+        if area.area > best.area * 1.001:
+            best = area
+    return best
+
+
+def _middle_line(
+    cuts: dict[float, shapely.Polygon], measured: MeasuredSection, frame: Frame, length: Mm
+) -> tuple[Array, Array | None]:
+    """Return where the member's axis begins (in the cutting plane), and its way if the member is tapered.
+
+    A tapered member's axis runs through the middles of its sections, on a slope to its edges.
+    """
+    ends = [cuts[share] for share in (min(STATIONS), max(STATIONS)) if share in cuts]
+    if measured.dimensions.shape != "I" or len(ends) < 2 or abs(ends[0].area - ends[1].area) < 1e-3 * ends[0].area:
+        return measured.middle, None
+    one, other = (measure_outline(end) for end in ends)
+    told = [(each.dimensions.shape, each.dimensions.tw, each.dimensions.b) for each in (one, other)]
+    if told[0][0] != told[1][0] or not np.allclose(told[0][1:], told[1][1:], atol=0.5):  # type: ignore[arg-type]
+        return measured.middle, None
+    slope = (other.middle - one.middle) / ((max(STATIONS) - min(STATIONS)) * length)
+    middle: Array = one.middle - slope * min(STATIONS) * length
+    return middle, unit(frame.axes[2] + slope @ frame.axes[:2])

@@ -130,9 +130,11 @@ def _asymmetric_i(size: Any) -> tuple[list[Array], SectionDimensions, None]:
         0.0,
     )
     widest = max(bottom[0], top[0])
+    # Flanges of two thicknesses have no single one to tell; each is measured where it is needed.
+    tf, r = (a if abs(a - b) < 0.01 else None for a, b in zip(bottom[1:3], top[1:3], strict=True))
     return (
         _i_outline(h, bottom, top, tw),
-        SectionDimensions("I", h, widest, tw, bottom[1], bottom[2] or None),
+        SectionDimensions("I", h, widest, tw, tf, r or None),
         None,
     )
 

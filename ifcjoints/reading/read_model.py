@@ -13,7 +13,7 @@ import shapely
 from ..model.audit import ModelFile
 from ..model.contents import Contents
 from ..model.findings import Problem
-from ..model.geometry import Frame, Prism
+from ..model.geometry import Frame, Prism, Solid
 from ..model.parts import Bolt, Hole, MemberName, MemberShape, Part, WeldPart
 from ..model.units import Array, Mm
 from ..settings import ReadingSettings
@@ -23,7 +23,7 @@ from .fasteners import FastenerReader
 from .holes import hole_from_opening, holes_in_plate
 from .kernel import solid_from_kernel
 from .materials import read_grade
-from .members import as_member
+from .members import as_built_up, as_member
 from .open_model import originating_system, sha256
 from .placements import Placements
 from .plates import as_plate
@@ -41,6 +41,9 @@ MARK_PROPERTIES = ("*.Reference", "*.Mark", "*.Piece mark", "*.Part mark", "*.As
 
 NEAR: Mm = 1000.0
 """A part whose box lies farther than this from every bolt belongs to no joint: end plates are smaller."""
+
+WIDEST_HOLE: Mm = 60.0
+"""An opening wider than this is no bolt hole but a cope or a notch (M42 in its hole is 45 mm)."""
 
 CORNERS = np.array([[bool(number >> axis & 1) for axis in range(3)] for number in range(8)])
 
@@ -65,6 +68,7 @@ class _Reading:
         self.fasteners = FastenerReader(self.bodies, self.units.length, settings.bolt_grade_properties)
         self.problems: list[Problem] = []
         self.shapes: dict[Piece, tuple[Prism | None, MemberShape | None]] = {}
+        self.built_up: dict[tuple[Piece, ...], MemberShape | None] = {}
         self.openings = self._openings()
 
     def contents(self, path: Path | None, progress: Progress) -> Contents:
@@ -122,6 +126,7 @@ class _Reading:
         plate, member = self._shape(pieces)
         grade, origin = read_grade(element, self.settings.steel_grade_properties)
         designation = read_designation(element, pieces, self.settings.designation_properties) if member else None
+        drilled, notches = self._holes(element)
         return Part(
             element.GlobalId,
             element.id(),
@@ -133,7 +138,8 @@ class _Reading:
             tuple(placed.in_world() for placed in pieces),
             plate,
             member,
-            tuple(self._holes(element, plate)),
+            (*(holes_in_plate(plate) if plate else ()), *drilled),
+            notches,
         )
 
     def _shape(self, pieces: list[PlacedPiece]) -> tuple[Prism | None, MemberShape | None]:
@@ -143,15 +149,34 @@ class _Reading:
             plate = as_plate(main.piece.solid)
             self.shapes[main.piece] = plate, None if plate else as_member(main.piece)
         plate, member = self.shapes[main.piece]
+        built_up = self._built_up(pieces) if plate is not None and len(pieces) > 1 else None
+        if built_up is not None:
+            return None, built_up
         return plate and _plate_moved(plate, main.matrix), member and _member_moved(member, main.matrix)
 
-    def _holes(self, element: Any, plate: Prism | None) -> list[Hole]:
-        holes = holes_in_plate(plate) if plate else []
+    def _built_up(self, pieces: list[PlacedPiece]) -> MemberShape | None:
+        """Judge web and flanges written as solids of one element, once for all elements that share them."""
+        place = pieces[0].matrix
+        if not all(np.array_equal(each.matrix, place) for each in pieces):
+            return as_built_up([placed.in_world() for placed in pieces])
+        together = tuple(each.piece for each in pieces)
+        if together not in self.built_up:
+            self.built_up[together] = as_built_up([piece.solid for piece in together])
+        member = self.built_up[together]
+        return member and _member_moved(member, place)
+
+    def _holes(self, element: Any) -> tuple[list[Hole], tuple[Solid, ...]]:
+        """Return an element's openings: drilled holes, and what is cut out of it besides."""
+        drilled: list[Hole] = []
+        notches: list[Solid] = []
         for opening in self.openings.get(element.id(), ()):
             for placed in self._guarded(opening, self.bodies.pieces) or []:
                 hole = hole_from_opening(placed)
-                holes += [hole] if hole else []
-        return holes
+                if hole is None or hole.diameter > WIDEST_HOLE:
+                    notches.append(placed.in_world())
+                else:
+                    drilled.append(hole)
+        return drilled, tuple(notches)
 
     def _openings(self) -> dict[int, list[Any]]:
         found: dict[int, list[Any]] = {}
