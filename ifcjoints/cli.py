@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import os
 import sys
 from collections.abc import Callable, Iterator
 from contextlib import contextmanager
@@ -19,6 +20,7 @@ from .checking.contract import HEADINGS
 from .checking.registry import InstalledCheck, installed_checks
 from .errors import IfcJointsError, InputError
 from .model.audit import Audit
+from .model.joints import Joint
 from .publishing import figures, words
 from .publishing.audit_json import write_audit
 from .publishing.files import write_files
@@ -76,7 +78,8 @@ def audit(
                 writers[f"{model.stem}.joints.ifc"] = lambda path: write_model(model, path, found)
             inputs = [path for path in (model, actions, config) if path is not None]
             written = write_files(out or Path(f"{model.stem}-joints"), writers, inputs)
-        _print_summary(found, written)
+        with _printing() as console:
+            _print_summary(console, found, written)
         raise typer.Exit(1 if found.failed else 0)
 
 
@@ -86,15 +89,14 @@ def checks(
 ) -> None:
     """List the installed checks, or print the manual of one."""
     with _plain_errors():
-        installed = installed_checks()
-        if check is None:
-            _print_checks(installed)
-            return
-        for each in installed:
-            if each.check.name == check:
-                _print_manual(each)
-                return
-        raise InputError(f'no check "{check}" is installed; "ifcjoints checks" lists those that are.')
+        installed = {each.check.name: each for each in installed_checks()}
+        if check is not None and check not in installed:
+            raise InputError(f'no check "{check}" is installed; "ifcjoints checks" lists those that are.')
+        with _printing() as console:
+            if check is None:
+                _print_checks(console, list(installed.values()))
+            else:
+                _print_manual(console, installed[check])
 
 
 @contextmanager
@@ -135,8 +137,17 @@ def _progress() -> Iterator[Callable[[str, float], None]]:
         yield lambda text, share: bar.update(task, description=text, completed=share)
 
 
-def _console() -> Console:
-    return Console(markup=False, highlight=False, soft_wrap=not sys.stdout.isatty())
+@contextmanager
+def _printing() -> Iterator[Console]:
+    """Print to standard output; a reader that closes it early does not change the exit status."""
+    console = Console(markup=False, highlight=False, soft_wrap=not sys.stdout.isatty())
+    with console.capture() as captured:
+        yield console
+    try:
+        sys.stdout.write(captured.get())
+        sys.stdout.flush()
+    except BrokenPipeError:
+        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
 
 
 def _table(*headings: str) -> Table:
@@ -146,18 +157,12 @@ def _table(*headings: str) -> Table:
     return table
 
 
-def _print_summary(found: Audit, written: tuple[Path, ...]) -> None:
-    console, counts = _console(), count(found)
-    joints = in_short(found)
+def _print_summary(console: Console, found: Audit, written: tuple[Path, ...]) -> None:
+    counts, joints = count(found), in_short(found)
     if joints:
         table = _table("joint", "kind", "rows", "result", "utilisation", "governing")
         for joint in joints[:LONGEST_SUMMARY]:
-            worst = governing_result(joint)
-            used = figures.ratio(worst.utilisation) if worst and worst.utilisation is not None else "–"
-            kind = "moment joint" if joint.moment_joint else "other"
-            result = words.STATUS[joint_status(joint)][1]
-            cells = joint.name, kind, str(len(joint.rows)), result, used, decisive(joint) or "–"
-            table.add_row(*map(Text, cells))
+            table.add_row(*map(Text, _summary_cells(joint)))
         console.print(table)
         if len(joints) > LONGEST_SUMMARY:
             console.print(f"… and {len(joints) - LONGEST_SUMMARY} more in the results.")
@@ -173,15 +178,27 @@ def _print_summary(found: Audit, written: tuple[Path, ...]) -> None:
         console.print(str(path))
 
 
-def _print_checks(installed: list[InstalledCheck]) -> None:
+def _summary_cells(joint: Joint) -> tuple[str, ...]:
+    worst = governing_result(joint)
+    return (
+        joint.name,
+        "moment joint" if joint.moment_joint else "other",
+        str(len(joint.rows)),
+        words.STATUS[joint_status(joint)][1],
+        figures.ratio(worst.utilisation) if worst and worst.utilisation is not None else "–",
+        decisive(joint) or "–",
+    )
+
+
+def _print_checks(console: Console, installed: list[InstalledCheck]) -> None:
     table = _table("check", "title", "package", "version")
     for each in installed:
         table.add_row(*map(Text, (each.check.name, each.check.title, each.package, each.version)))
-    _console().print(table)
+    console.print(table)
 
 
-def _print_manual(installed: InstalledCheck) -> None:
-    console, check = _console(), installed.check
+def _print_manual(console: Console, installed: InstalledCheck) -> None:
+    check = installed.check
     console.print(f"{check.name}: {check.title}")
     console.print(f"{installed.package} {installed.version} · {check.method}")
     for heading in HEADINGS:
