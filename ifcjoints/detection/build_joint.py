@@ -33,7 +33,7 @@ from .end_plates import EndConnection
 from .flanges import FlangeBand, outer_flanges
 from .groups import BoltGroup
 from .moment_rule import judge
-from .neighbours import carrier_stiffeners, standing_roles, welds_of
+from .neighbours import carrier_plates, standing_roles, welds_of
 from .plies import PartIndex
 from .rows import bolts_in_plane, find_rows
 
@@ -187,8 +187,8 @@ def _roles(
     roles.update(dict.fromkeys(carrier.backing, "backing_plate"))
     if carrier.part is not None and carrier.meets is None:
         taken = {*roles, *connection.cuts, carrier.part}
-        found = carrier_stiffeners(connection, scene.parts[carrier.part], scene.parts, scene.index, taken)
-        roles.update(dict.fromkeys(found, "stiffener"))
+        found = carrier_plates(connection, scene.parts[carrier.part], scene.parts, scene.index, taken)
+        roles.update(found)
     return roles
 
 

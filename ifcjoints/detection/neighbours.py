@@ -7,8 +7,8 @@ from collections.abc import Sequence
 import numpy as np
 
 from ..model.joints import JointWeld
-from ..model.parts import Part, WeldPart
-from ..model.units import Mm
+from ..model.parts import MemberShape, Part, WeldPart
+from ..model.units import Array, Mm
 from .end_plates import EndConnection
 from .flanges import FlangeBand
 from .plies import PartIndex
@@ -18,6 +18,9 @@ BEYOND: Mm = 150.0
 
 ACROSS = 0.3
 """A stiffener's normal and the carrier's axis have at least this cosine (a diagonal stiffener's is about 0.7)."""
+
+FLAT = 0.99
+"""A plate lies flat on a web if the cosine between their normals is at least this."""
 
 OVERHANG: Mm = 30.0
 """A stiffener may stand out past the carrier's flange tips by this."""
@@ -46,22 +49,24 @@ def _standing_role(part: Part, has_flange: bool, haunched: bool, connection: End
     return "haunch_web" if haunched and in_web_plane else "stiffener"
 
 
-def carrier_stiffeners(
+def carrier_plates(
     connection: EndConnection, carrier: Part, parts: Sequence[Part], index: PartIndex, taken: set[int]
-) -> list[int]:
-    """Return the plates that stiffen the carrier behind the end plate: within its section, beside the bolts."""
+) -> dict[int, str]:
+    """Return the plates within the carrier's section beside the bolts: its stiffeners, and plates on its web."""
     member = carrier.member
     if member is None:
-        return []
+        return {}
     low, high = parts[connection.plate].bounds
     reach = max(member.section.h, member.section.b) + BEYOND
-    found = []
+    found = {}
     for number in index.around(low - reach, high + reach):
         plate = parts[number].plate
-        if number in taken or plate is None or abs(plate.frame.axes[2] @ connection.frame.axes[2]) > 0.5:
+        if number in taken or plate is None or not _is_beside(parts[number], connection):
             continue
-        if _is_beside(parts[number], connection) and _is_stiffener(parts[number], carrier):
-            found.append(number)
+        if _is_stiffener(parts[number], carrier):
+            found[number] = "stiffener"
+        elif _is_web_plate(parts[number], carrier):
+            found[number] = "web_plate"
     return found
 
 
@@ -77,10 +82,30 @@ def _is_stiffener(part: Part, carrier: Part) -> bool:
     member, plate = carrier.member, part.plate
     if member is None or plate is None or abs(plate.frame.axes[2] @ member.axis) < ACROSS:
         return False
-    corners = np.vstack([solid.vertices for solid in part.solids]) - member.start
-    depth, width = corners @ member.depth, corners @ member.strong_axis
+    if abs(plate.frame.axes[2] @ member.strong_axis) > ACROSS:
+        return False
+    depth, width = _in_section(part, member)
     inside = np.abs(depth).max() < member.section.h / 2 + 1.0 and np.abs(width).max() < member.section.b / 2 + OVERHANG
     return bool(inside and (width.min() > -1.0 or width.max() < 1.0))
+
+
+def _is_web_plate(part: Part, carrier: Part) -> bool:
+    """Whether a plate lies flat on the carrier's web, between its flanges."""
+    member, plate = carrier.member, part.plate
+    if member is None or plate is None or member.section.tw is None:
+        return False
+    if abs(plate.frame.axes[2] @ member.strong_axis) < FLAT:
+        return False
+    depth, width = _in_section(part, member)
+    near = min(abs(width.min()), abs(width.max())) if width.min() * width.max() > 0 else 0.0
+    touches = abs(near - member.section.tw / 2) < 1.0
+    return bool(touches and np.abs(depth).max() < member.section.h / 2)
+
+
+def _in_section(part: Part, member: MemberShape) -> tuple[Array, Array]:
+    """Return a part's corners along a member's depth and across it, from its axis."""
+    corners = np.vstack([solid.vertices for solid in part.solids]) - member.start
+    return corners @ member.depth, corners @ member.strong_axis
 
 
 def welds_of(
