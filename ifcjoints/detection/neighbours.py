@@ -22,6 +22,9 @@ ACROSS = 0.3
 FLAT = 0.99
 """A plate lies flat on a web if the cosine between their normals is at least this."""
 
+MOST_OF_WEB = 0.6
+"""A plate that strengthens a web covers this share of it at least; a tag or a bracket's foot does not."""
+
 OVERHANG: Mm = 30.0
 """A stiffener may stand out past the carrier's flange tips by this."""
 
@@ -90,13 +93,17 @@ def _is_stiffener(part: Part, carrier: Part) -> bool:
 
 
 def _is_web_plate(part: Part, carrier: Part) -> bool:
-    """Whether a plate lies flat on the carrier's web, between its flanges."""
+    """Whether a plate lies flat on the carrier's web, over most of it from flange to flange and as long as that."""
     member, plate = carrier.member, part.plate
-    if member is None or plate is None or member.section.tw is None:
+    if member is None or plate is None or member.section.tw is None or member.section.tf is None:
         return False
     if abs(plate.frame.axes[2] @ member.strong_axis) < FLAT:
         return False
     depth, width = _in_section(part, member)
+    length = np.ptp(np.vstack([solid.vertices for solid in part.solids]) @ member.axis)
+    clear = member.section.h - 2 * member.section.tf
+    if np.ptp(depth) < MOST_OF_WEB * clear or length < clear:
+        return False
     near = min(abs(width.min()), abs(width.max())) if width.min() * width.max() > 0 else 0.0
     touches = abs(near - member.section.tw / 2) < 1.0
     return bool(touches and np.abs(depth).max() < member.section.h / 2)
