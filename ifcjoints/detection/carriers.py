@@ -5,6 +5,8 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass
 
+import numpy as np
+
 from ..model.joints import Configuration
 from ..model.parts import Part
 from .end_plates import EndConnection
@@ -34,8 +36,9 @@ def find_carrier(
     beyond = group.parts[:place][::-1] if inwards else group.parts[place + 1 :]
     packs: list[int] = []
     for depth, number in enumerate(beyond):
-        meeting = next((other for other in others if other.plate == number and other is not connection), None)
-        if meeting is not None and meeting.frame.axes[2] @ connection.frame.axes[2] < 0:
+        facing = [each for each in others if each.plate == number and each.frame.axes[2] @ connection.frame.axes[2] < 0]
+        if facing:
+            meeting = min(facing, key=lambda each: float(np.linalg.norm(each.frame.origin - connection.frame.origin)))
             return Carrier(meeting.member, "splice", meeting, tuple(packs))
         if parts[number].member is not None:
             backing = tuple(each for each in beyond[depth + 1 :] if _is_backing(each, others, parts))

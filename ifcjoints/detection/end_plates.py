@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 import shapely
@@ -56,14 +56,13 @@ def end_connections(group: BoltGroup, parts: Sequence[Part], index: PartIndex, g
         outward = [-group.direction] if place == 0 else [group.direction] if place == len(group.parts) - 1 else []
         for side in outward:
             normal = plate.frame.axes[2] * np.sign(plate.frame.axes[2] @ side)
-            connection = _connection(number, normal, group, parts, index, gap)
-            found += [connection] if connection else []
+            found += _connections(number, normal, group, parts, index, gap)
     return found
 
 
-def _connection(
+def _connections(
     number: int, normal: Array, group: BoltGroup, parts: Sequence[Part], index: PartIndex, gap: Mm
-) -> EndConnection | None:
+) -> list[EndConnection]:
     plate = parts[number].plate
     assert plate is not None
     low, high = parts[number].bounds
@@ -72,7 +71,10 @@ def _connection(
     face = interface + plate.thickness
     standing = [each for each in nearby if _stands_on(parts[each], normal, face, gap)]
     members = [each for each in standing if _is_member(parts[each], normal)]
+    found: list[EndConnection] = []
     for member in sorted(members, key=lambda each: -_length(parts[each])):
+        if any(_belongs_to(parts[member], other.shape, gap) for other in found):
+            continue
         shape = parts[member].member
         assert shape is not None
         frame = interface_frame(shape, normal, interface)
@@ -81,8 +83,27 @@ def _connection(
         cuts = {each: _standing_area(parts[each], frame, height, outline) for each in standing}
         cuts = {each: area for each, area in cuts.items() if not area.is_empty}
         if member in cuts:
-            return EndConnection(number, member, shape, frame, plate.thickness, outline, height, cuts)
-    return None
+            found.append(EndConnection(number, member, shape, frame, plate.thickness, outline, height, cuts))
+    return found if len(found) < 2 else _shared_out(found)
+
+
+def _belongs_to(part: Part, member: MemberShape, gap: Mm) -> bool:
+    """Whether a part touches a member along its length, as a haunch does, and so is no member of its own."""
+    corners = np.vstack([solid.vertices for solid in part.solids]) - member.start
+    depth, width = np.abs(corners @ member.depth), np.abs(corners @ member.strong_axis)
+    inside = (depth < member.section.h / 2 + gap) & (width < member.section.b / 2 + gap)
+    return bool(inside.any())
+
+
+def _shared_out(connections: Sequence[EndConnection]) -> list[EndConnection]:
+    """Leave to each member of one plate only the parts that stand nearest to it."""
+    members = [each.member for each in connections]
+    own: list[dict[int, Area]] = [{} for _ in connections]
+    for part in connections[0].cuts:
+        away = [each.cuts[part].distance(each.cuts[each.member]) for each in connections]
+        nearest = members.index(part) if part in members else int(np.argmin(away))
+        own[nearest][part] = connections[nearest].cuts[part]
+    return [replace(each, cuts=cuts) for each, cuts in zip(connections, own, strict=True)]
 
 
 def _far_face(plate: Prism) -> Array:

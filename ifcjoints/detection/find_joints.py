@@ -16,6 +16,7 @@ from .end_plates import EndConnection, end_connections
 from .groups import BoltGroup, group_bolts
 from .identity import joint_id, with_families
 from .plies import PartIndex, Ply, find_plies
+from .shared_plates import bolts_about
 
 KIND_NAMES = {
     "anchor": "an anchor",
@@ -63,13 +64,14 @@ def _joints_of(scene: Scene, group: BoltGroup) -> list[Joint]:
     gap = scene.settings.detection.contact_gap_mm
     connections = end_connections(group, scene.parts, scene.index, gap)
     joints = []
-    done: set[int] = set()
+    done: set[tuple[int, int]] = set()
     for connection in sorted(connections, key=lambda each: _rank(each, scene.parts)):
-        if connection.plate in done:
+        if (connection.plate, connection.member) in done:
             continue
         carrier = find_carrier(connection, connections, group, scene.parts)
-        done |= {connection.plate} | ({carrier.meets.plate} if carrier.meets else set())
-        joints.append(end_plate_joint(scene, group, connection, carrier))
+        done |= {(each.plate, each.member) for each in (connection, carrier.meets) if each is not None}
+        own = bolts_about(connection, connections, group)
+        joints += [end_plate_joint(scene, own, connection, carrier)] if own.bolts else []
     return joints or [plain_joint(scene, group)]
 
 
