@@ -4,12 +4,12 @@ from __future__ import annotations
 
 import numpy as np
 import pytest
-from patterns.making import FOOT, INCH, Model, at, box, circle, i_ring, prism_faces, turned
-from patterns.oracle import kernel_volume_and_box
 
 from ifcjoints.reading.bodies import BodyReader
 from ifcjoints.reading.placements import Placements
 from ifcjoints.reading.units import read_units
+from tests.patterns.making import FOOT, INCH, Model, at, box, circle, i_ring, prism_faces, turned
+from tests.patterns.oracle import kernel_volume_and_box
 
 PLACE = turned(37.0, (1, 2, 3), (1200.0, -300.0, 4500.0))
 UNITS = (1.0, 10.0, 1000.0, INCH, FOOT)

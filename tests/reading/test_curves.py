@@ -6,12 +6,12 @@ import math
 
 import numpy as np
 import pytest
-from patterns.making import INCH, Model
 
 from ifcjoints.model.geometry import signed_area
 from ifcjoints.reading.curves import ring, three_point_arc
 from ifcjoints.reading.placements import Placements
 from ifcjoints.reading.unreadable import Unreadable
+from tests.patterns.making import INCH, Model
 
 CHORDS = 0.012
 """A circle in chords of 15° lacks 1.14 % of its area."""

@@ -11,10 +11,10 @@ import pytest
 import shapely
 from hypothesis import given, settings
 from hypothesis import strategies as st
-from patterns.making import INCH, box, circle, i_ring
 from shapely import affinity
 
 from ifcjoints.reading.section_outlines import measure_outline
+from tests.patterns.making import INCH, box, circle, i_ring
 
 I_SECTIONS = {
     "IPE 200": (200, 100, 5.6, 8.5, 12),
