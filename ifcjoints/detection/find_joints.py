@@ -13,8 +13,9 @@ from ..settings import Settings
 from .build_joint import Scene, end_plate_joint, plain_joint
 from .carriers import find_carrier
 from .end_plates import EndConnection, end_connections
+from .families import with_families
 from .groups import BoltGroup, group_bolts
-from .identity import joint_id, with_families
+from .identity import joint_id
 from .plies import PartIndex, Ply, find_plies
 from .shared_plates import bolts_about
 
