@@ -188,7 +188,8 @@ def fill(
         cap = row.n * F_tRd
         if brittle and row is not first:
             cap = least(cap, row.n * (forces[first.index] / first.n) * row.y / first.y)
-        limit = "compression flange" if float(left) < float(cap) else f"row {row.index + 1}, bolt tension"
+        at_limit = first if brittle else row
+        limit = "compression flange" if float(left) < float(cap) else f"row {at_limit.index + 1}, bolt tension"
         forces[row.index] = trace.step(f"F_{row.index + 1}", least(cap, left), "kN", NO_PRYING)
         left = left - forces[row.index]
     if sum(map(float, forces.values())) < float(loads.N):

@@ -1,0 +1,1 @@
+"""Small models of an invented boatyard, and the script that makes them."""
