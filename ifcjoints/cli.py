@@ -30,6 +30,7 @@ from .publishing.verdict import count, decisive, governing_result, in_short, joi
 from .settings import read_settings
 
 LONGEST_SUMMARY = 25
+WIDTH_OF_PIPES = 140
 
 app = typer.Typer(
     help="Audit the bolted moment joints of a steel building model in IFC.",
@@ -140,7 +141,8 @@ def _progress() -> Iterator[Callable[[str, float], None]]:
 @contextmanager
 def _printing() -> Iterator[Console]:
     """Print to standard output; a reader that closes it early does not change the exit status."""
-    console = Console(markup=False, highlight=False, soft_wrap=not sys.stdout.isatty())
+    terminal = sys.stdout.isatty()
+    console = Console(markup=False, highlight=False, soft_wrap=not terminal, width=None if terminal else WIDTH_OF_PIPES)
     with console.capture() as captured:
         yield console
     try:

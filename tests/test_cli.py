@@ -283,6 +283,10 @@ def written(tmp_path_factory: pytest.TempPathFactory) -> Callable[[Path], Path]:
     return results
 
 
+def test_there_are_sample_models() -> None:
+    assert len(SAMPLES) >= 3
+
+
 @pytest.mark.parametrize("model", SAMPLES, ids=lambda path: path.stem)
 class TestSampleModels:
     def test_everything_that_stood_in_the_model_stands_there_unchanged(

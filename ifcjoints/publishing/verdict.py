@@ -7,6 +7,8 @@ from dataclasses import dataclass
 from ..model.audit import Audit
 from ..model.joints import Joint
 from ..model.results import Result, Status
+from . import figures
+from .words import TENSION
 
 # A joint passes only where nothing that applies to it fails or could not be checked.
 _WORST_FIRST: tuple[Status, ...] = ("fail", "not_checkable", "pass", "resistance_only", "not_applicable")
@@ -27,13 +29,22 @@ def governing_result(joint: Joint) -> Result | None:
 
 
 def decisive(joint: Joint) -> str:
-    """Say what a joint's status rests on: the failing or governing check, else the first error finding."""
+    """Say what a joint's status rests on: an error finding, the governing check, or the least resistance."""
     errors = [finding for finding in joint.findings if finding.severity == "error"]
     result = governing_result(joint)
     if errors and (result is None or result.status != "fail"):
         more = f" and {len(errors) - 1} more" if len(errors) > 1 else ""
         return f"{errors[0].code}{more}"
-    return f"{result.check}: {result.governing}" if result else ""
+    return f"{result.check}: {result.governing}" if result else _least_moment(joint)
+
+
+def _least_moment(joint: Joint) -> str:
+    stated = [result for result in joint.checks if "M_kNm" in result.resistance]
+    if not stated:
+        return ""
+    least = min(stated, key=lambda result: result.resistance["M_kNm"])
+    moment = figures.tenths(least.resistance["M_kNm"])
+    return f"least M = {moment} kNm ({least.check}, {TENSION[least.tension_flange]})"
 
 
 def in_short(audit: Audit) -> tuple[Joint, ...]:
