@@ -16,6 +16,9 @@ import numpy.typing as npt
 
 from .units import Array, Mm
 
+OPEN = 1e-5
+"""A closed body's area vectors cancel to this share of its surface."""
+
 Indices = npt.NDArray[np.int64]
 
 
@@ -178,6 +181,19 @@ class Solid:
         return abs(float(np.sum((self.offsets - self.normals @ centre) * self.areas))) / 3.0
 
     @cached_property
+    def is_open(self) -> bool:
+        """Whether the faces do not close, or do not all look outwards: their area vectors then do not cancel."""
+        return float(np.linalg.norm(self.area_vectors.sum(axis=0))) > OPEN * float(self.areas.sum())
+
+    @cached_property
+    def open_edges(self) -> int:
+        """How many edges bound one face only."""
+        welded = np.unique(np.round(self.vertices, 3), axis=0, return_inverse=True)[1].reshape(-1)
+        edges = np.sort(np.column_stack([welded[self.corners], welded[self.next_corner]]), axis=1)
+        _, counts = np.unique(edges[edges[:, 0] != edges[:, 1]], axis=0, return_counts=True)
+        return int((counts % 2).sum())
+
+    @cached_property
     def bounds(self) -> tuple[Array, Array]:
         """The corners of the axis-parallel box around the solid."""
         return self.vertices.min(axis=0), self.vertices.max(axis=0)
@@ -239,3 +255,9 @@ class Prism:
     outline: Array
     holes: tuple[Array, ...]
     thickness: Mm
+
+    def as_solid(self) -> Solid:
+        """Return the plate's body."""
+        matrix = np.eye(4)
+        matrix[:3, :3], matrix[:3, 3] = self.frame.axes.T, self.frame.origin
+        return Solid.extruded([self.outline, *self.holes], matrix, np.array([0.0, 0.0, self.thickness]))

@@ -4,10 +4,13 @@ from __future__ import annotations
 
 from typing import TypeAlias
 
+import numpy as np
 import shapely
 
 from ..model.geometry import Frame, Solid
-from ..model.units import Array
+from ..model.units import Array, Mm
+
+GAP: Mm = 1e-6
 
 Area: TypeAlias = shapely.Polygon | shapely.MultiPolygon
 
@@ -15,10 +18,20 @@ Area: TypeAlias = shapely.Polygon | shapely.MultiPolygon
 def cut_area(solid: Solid, frame: Frame) -> Area:
     """Return the area (empty if none) in which the frame's plane cuts the solid, in the frame's x and y."""
     segments = solid.cut(frame)
-    if len(segments) < 3:
+    if len(segments) < 2:
         return shapely.Polygon()
+    if solid.is_open:
+        segments = _closed(segments)
     area = shapely.build_area(shapely.multilinestrings(shapely.linestrings(segments)))
     return area if isinstance(area, shapely.Polygon) and not area.is_empty else _by_cells(segments)
+
+
+def _closed(segments: Array) -> Array:
+    """Close each chain of segments that ends open, where a face of the body is missing, by a straight one."""
+    merged = shapely.line_merge(shapely.multilinestrings(shapely.linestrings(segments)))
+    chains = [np.array(chain.coords) for chain in shapely.get_parts(merged)]
+    missing = [[chain[-1], chain[0]] for chain in chains if len(chain) > 2 and np.abs(chain[0] - chain[-1]).max() > GAP]
+    return np.concatenate([segments, np.array(missing)]) if missing else segments
 
 
 def _by_cells(segments: Array) -> Area:

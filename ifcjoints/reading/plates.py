@@ -9,6 +9,9 @@ from ..model.geometry import Frame, Indices, Prism, Solid
 from ..model.units import Array, Mm
 
 PARALLEL = 0.9999
+SQUARE = 0.02
+"""A plate's edge is square to its faces within this cosine."""
+
 FULLNESS = 0.85
 """The least share of outline × thickness that the body fills (bevelled edges take some away)."""
 
@@ -50,12 +53,25 @@ def _between_faces(solid: Solid, normal: Array) -> Prism | None:
     height = np.where(solid.normals @ normal > 0, solid.offsets, -solid.offsets)
     caps = [np.flatnonzero(facing & (np.abs(height - end) < level)) for end in (low, high)]
     areas = [float(solid.areas[cap].sum()) for cap in caps]
-    if min(areas) <= 0 or solid.volume < FULLNESS * max(areas) * thickness:
+    if solid.is_open:
+        full = max(areas) > 0 and _stands_between(solid, normal, (low, high), level)
+    else:
+        full = min(areas) > 0 and solid.volume >= FULLNESS * max(areas) * thickness
+    if not full:
         return None
     cap = caps[int(areas[1] > areas[0])]
     frame = Frame.from_z(low * normal, normal)
     rings = _outline(solid, cap, frame)
     return Prism(frame, rings[0], tuple(rings[1:]), thickness) if rings else None
+
+
+def _stands_between(solid: Solid, normal: Array, ends: tuple[Mm, Mm], level: Mm) -> bool:
+    """Whether an open shell is what is left of a plate: all corners on the two ends, the faces square."""
+    heights = solid.vertices @ normal
+    on_end = np.minimum(np.abs(heights - ends[0]), np.abs(heights - ends[1])) < level
+    facing = np.abs(solid.normals @ normal)
+    square = (facing > PARALLEL) | (facing < SQUARE) | (solid.areas < 1e-6)
+    return bool(on_end.all() and square.all())
 
 
 def _outline(solid: Solid, faces: Indices, frame: Frame) -> list[Array]:

@@ -20,6 +20,7 @@ from ..settings import ReadingSettings
 from .bodies import BodyReader, Piece, PlacedPiece
 from .designations import read_designation
 from .fasteners import FastenerReader
+from .faults import body_faults, doubled_ids
 from .holes import hole_from_opening, holes_in_plate
 from .kernel import solid_from_kernel
 from .materials import read_grade
@@ -74,6 +75,7 @@ class _Reading:
     def contents(self, path: Path | None, progress: Progress) -> Contents:
         bolts: list[Bolt] = []
         welds: list[WeldPart] = []
+        self.problems += doubled_ids(self._sorted("IfcElement"))
         for element in self._sorted("IfcFastener", "IfcMechanicalFastener"):
             if element.is_a("IfcMechanicalFastener"):
                 bolts += self._guarded(element, self.fasteners.read) or []
@@ -117,16 +119,22 @@ class _Reading:
         self.problems.append(Problem(element=element.GlobalId or f"#{element.id()}", message=message))
 
     def _pieces(self, element: Any) -> list[PlacedPiece]:
+        if element.ObjectPlacement is None:
+            self._problem(element, f"{element.is_a()} has no placement; it is taken at the model's origin")
         try:
             return self.bodies.pieces(element)
         except Unreadable:
             return [PlacedPiece(Piece(solid_from_kernel(element)), np.eye(4))]
 
     def _part(self, element: Any, pieces: list[PlacedPiece]) -> Part:
+        for fault in body_faults(pieces):
+            self._problem(element, fault)
         plate, member = self._shape(pieces)
         grade, origin = read_grade(element, self.settings.steel_grade_properties)
         designation = read_designation(element, pieces, self.settings.designation_properties) if member else None
         drilled, notches = self._holes(element)
+        # A plate whose shell is open is known by what is left of it, and stands closed from here on.
+        mended = plate if plate is not None and len(pieces) == 1 and pieces[0].piece.solid.is_open else None
         return Part(
             element.GlobalId,
             element.id(),
@@ -135,7 +143,7 @@ class _Reading:
             designation,
             grade,
             origin,
-            tuple(placed.in_world() for placed in pieces),
+            tuple(placed.in_world() for placed in pieces) if not mended else (mended.as_solid(),),
             plate,
             member,
             (*(holes_in_plate(plate) if plate else ()), *drilled),
