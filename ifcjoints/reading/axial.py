@@ -52,6 +52,13 @@ class BoltBody:
     diameter: Mm
     has_head: bool
 
+    def moved(self, matrix: Array) -> BoltBody:
+        """Return the bolt under a rigid transformation (4, 4)."""
+        turn = matrix[:3, :3]
+        return BoltBody(
+            turn @ self.point + matrix[:3, 3], turn @ self.direction, self.length, self.diameter, self.has_head
+        )
+
 
 def as_turned(placed: PlacedPiece) -> TurnedBody | None:
     """Return a piece as a turned body in the world, or None."""

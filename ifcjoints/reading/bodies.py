@@ -82,11 +82,14 @@ class BodyReader:
 
     def pieces(self, element: Any) -> list[PlacedPiece]:
         """Return an element's solids in the world, none without a body; Unreadable: ask the kernel."""
+        return _moved(self.own_pieces(element), self.world_of(element))
+
+    def own_pieces(self, element: Any) -> list[PlacedPiece]:
+        """Return an element's solids in its own axes. Elements that share a shape share its pieces."""
         representation = body_of(element)
         if representation is None:
             return []
-        world = self._placements.of_element(element.ObjectPlacement)
-        return [moved for item in representation.Items for moved in _moved(self.item(item), world)]
+        return [placed for item in representation.Items for placed in self.item(item)]
 
     def world_of(self, element: Any) -> Array:
         """Return an element's placement in the world."""

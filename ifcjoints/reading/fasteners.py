@@ -6,15 +6,13 @@ import re
 from typing import Any
 
 import ifcopenshell.util.element as element_util
-import numpy as np
 
 from ..model.joints import Provenance
 from ..model.parts import Bolt, BoltKind
 from ..model.units import Array, Mm
 from ..tables.bolts import bolt_grade
 from .axial import BoltBody, as_turned, bolts_of
-from .bodies import BodyReader, Piece, PlacedPiece
-from .kernel import solid_from_kernel
+from .bodies import BodyReader
 from .properties import property_texts
 from .unreadable import Unreadable
 
@@ -35,6 +33,10 @@ PLAUSIBLE = (5.0, 100.0)
 """Between these diameters in mm a bolt of steelwork lies; common practice, no source."""
 
 
+Texts = list[tuple[str, str]]
+"""Texts, each with where it stands."""
+
+
 class FastenerReader:
     """Reads fastener elements. `grade_properties` are the property names that may hold a bolt's grade."""
 
@@ -43,29 +45,32 @@ class FastenerReader:
         self._length = length_unit
         self._grade_properties = grade_properties
         self.conflicts: list[tuple[str, str]] = []
+        self._shapes: dict[tuple[tuple[int, bytes], ...], list[BoltBody]] = {}
 
     def read(self, element: Any) -> list[Bolt]:
         """Return the bolts of one element: as many as its body shows, or one where it has none."""
-        kind, why = kind_of(element)
-        grade, origin = self._grade(element)
-        measured = self._measured(element)
+        texts = texts_of(element, element_util.get_type(element))
+        kind = kind_of(element, texts)
+        grade = self._grade(element, texts)
         nominal = [self._nominal(element, name) for name in ("NominalDiameter", "NominalLength")]
         return [
-            self._bolt(element, index, (kind, why), (grade, origin), nominal, body)
-            for index, body in enumerate(measured or [None])
+            self._bolt(element, index, kind, grade, nominal, body)
+            for index, body in enumerate(self._measured(element) or [None])
         ]
 
     def _measured(self, element: Any) -> list[BoltBody | None]:
+        """Measure the bolts of an element; a shape that many elements share is measured once."""
         try:
-            pieces = self._bodies.pieces(element)
-        except Unreadable:
-            try:
-                pieces = [PlacedPiece(Piece(solid_from_kernel(element)), np.eye(4))]
-            except Unreadable as reason:
-                self.conflicts.append((element.GlobalId, f"the bolt's body cannot be read: {reason}"))
-                return []
-        turned = [body for piece in pieces if (body := as_turned(piece)) is not None]
-        return list(bolts_of(turned))
+            pieces = self._bodies.own_pieces(element)
+        except Unreadable as reason:
+            self.conflicts.append((element.GlobalId, f"the bolt's body cannot be read: {reason}"))
+            return []
+        key = tuple((id(placed.piece), placed.matrix.tobytes()) for placed in pieces)
+        if key not in self._shapes:
+            turned = [body for piece in pieces if (body := as_turned(piece)) is not None]
+            self._shapes[key] = bolts_of(turned)
+        world = self._bodies.world_of(element)
+        return [body.moved(world) for body in self._shapes[key]]
 
     def _bolt(
         self,
@@ -140,23 +145,14 @@ class FastenerReader:
                 return float(value) * self._length, f"{owner.is_a()}.{name}"
         return size_in_name(element, name)
 
-    def _grade(self, element: Any) -> tuple[str | None, Provenance | None]:
-        """Return the first text that names a grade this program knows, as it is written."""
-        for text, origin in self._grade_texts(element):
-            if text and bolt_grade(text) is not None:
-                return text, Provenance(source="read", detail=origin)
+    def _grade(self, element: Any, texts: Texts) -> tuple[str | None, Provenance | None]:
+        """Return the designation of the first text that names a grade this program knows."""
+        materials = [(material.Name, "material") for material in element_util.get_materials(element) if material.Name]
+        for text, origin in (*property_texts(element, self._grade_properties), *texts, *materials):
+            found = bolt_grade(text)
+            if found is not None:
+                return found.name, Provenance(source="read", detail=f'{origin} "{text.strip()}"')
         return None, None
-
-    def _grade_texts(self, element: Any) -> list[tuple[str, str]]:
-        texts = property_texts(element, self._grade_properties)
-        owner = element_util.get_type(element)
-        for each in (element, owner):
-            for name in ("Name", "Description", "ObjectType", "Tag", "ElementType"):
-                text = getattr(each, name, None) if each is not None else None
-                if text:
-                    texts.append((text, f"{each.is_a()}.{name}"))
-        texts += [(material.Name, "material") for material in element_util.get_materials(element) if material.Name]
-        return texts
 
     def _axis_from_placement(self, element: Any) -> tuple[Array | None, Array | None]:
         """Take the placement's z axis for a bolt without a body, as the schema's examples draw them."""
@@ -166,19 +162,26 @@ class FastenerReader:
         return matrix[:3, 3], matrix[:3, 2]
 
 
-def kind_of(element: Any) -> tuple[BoltKind, str]:
+def texts_of(element: Any, owner: Any) -> Texts:
+    """Return the texts that may tell what a fastener is, each with where it stands: its own, then its type's."""
+    found = []
+    for each in (element, owner) if owner is not None else (element,):
+        for name in ("ObjectType", "ElementType", "Description", "Name", "Tag"):
+            text = getattr(each, name, None)
+            if text:
+                found.append((str(text), f"{each.is_a()}.{name}"))
+    return found
+
+
+def kind_of(element: Any, texts: Texts) -> tuple[BoltKind, str]:
     """Tell bolts from anchors, studs and the rest: by predefined type, then by what the texts say."""
-    owner = element_util.get_type(element)
-    for each in (element, owner):
-        predefined = getattr(each, "PredefinedType", None) if each is not None else None
-        if predefined in PREDEFINED:
-            return PREDEFINED[predefined], f"predefined type {predefined}"
-    for each in (element, owner):
-        for name in ("ObjectType", "ElementType", "Description", "Name"):
-            text = getattr(each, name, None) if each is not None else None
-            for kind, words in KIND_WORDS:
-                if text and re.search(words, text, re.IGNORECASE):
-                    return kind, f'{name} "{text.strip()}"'
+    predefined = element_util.get_predefined_type(element)
+    if predefined in PREDEFINED:
+        return PREDEFINED[predefined], f"predefined type {predefined}"
+    for text, origin in texts:
+        for kind, words in KIND_WORDS:
+            if re.search(words, text, re.IGNORECASE):
+                return kind, f'{origin} "{text.strip()}"'
     return "bolt", "no other kind named"
 
 
