@@ -40,6 +40,12 @@ def signed_area(ring: Array) -> float:
     return 0.5 * float(x @ np.roll(y, -1) - y @ np.roll(x, -1))
 
 
+def crosses(first: Array, second: Array) -> Array:
+    """Return the cross products of the rows of two arrays (n, 3)."""
+    (a, b, c), (x, y, z) = first.T, second.T
+    return np.column_stack([b * z - c * y, c * x - a * z, a * y - b * x])
+
+
 @dataclass(frozen=True, slots=True)
 class Frame:
     """A right-handed frame. `axes` (3, 3) holds the unit x, y and z axes as rows."""
@@ -147,7 +153,7 @@ class Solid:
         """For each face its normal times its area (m, 3), holes taken off (Newell's method)."""
         base = self.vertices[self.corners[self.loop_start]][self.corner_loop]
         a, b = self.vertices[self.corners] - base, self.vertices[self.next_corner] - base
-        loops = 0.5 * np.add.reduceat(np.cross(a, b), self.loop_start, axis=0)
+        loops = 0.5 * np.add.reduceat(crosses(a, b), self.loop_start, axis=0)
         outer = loops[self.is_outer]
         holes = np.where(self.is_outer, 0.0, np.linalg.norm(loops, axis=1))
         taken = np.bincount(self.loop_face, holes, minlength=len(outer))

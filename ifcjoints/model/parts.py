@@ -7,7 +7,7 @@ from typing import Literal
 
 import numpy as np
 
-from .geometry import Prism, Solid
+from .geometry import Prism, Solid, cross
 from .joints import Provenance
 from .sections import SectionDimensions
 from .units import Array, Mm
@@ -33,7 +33,7 @@ class MemberShape:
     @property
     def strong_axis(self) -> Array:
         """The axis of strong bending: square to the member and to its depth."""
-        return np.cross(self.axis, self.depth)
+        return cross(self.axis, self.depth)
 
     @property
     def middle(self) -> Array:

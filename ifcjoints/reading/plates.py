@@ -26,10 +26,12 @@ THIN: Mm = 12.0
 
 
 def as_plate(solid: Solid) -> Prism | None:
-    """Return the solid as a plate, or None. The thinnest direction that fits is its thickness."""
-    candidates = [prism for normal in _broad_normals(solid) if (prism := _between_faces(solid, normal))]
-    plates = [prism for prism in candidates if _looks_like_plate(prism)]
-    return min(plates, key=lambda prism: prism.thickness, default=None)
+    """Return the solid as a plate, or None. The broadest faces that fit bound the least thickness."""
+    for normal in _broad_normals(solid):
+        prism = _between_faces(solid, normal)
+        if prism is not None and _looks_like_plate(prism):
+            return prism
+    return None
 
 
 def _broad_normals(solid: Solid) -> list[Array]:
