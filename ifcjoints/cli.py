@@ -210,7 +210,3 @@ def _print_manual(console: Console, installed: InstalledCheck) -> None:
         console.print(Text(f'\nOptions, in [checks."{check.name}"] of the settings', style="bold"))
         for name, field in check.options.model_fields.items():
             console.print(f"{name} = {field.default!r}  {field.description or ''}".rstrip())
-
-
-if __name__ == "__main__":
-    main()

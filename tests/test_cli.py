@@ -239,7 +239,7 @@ def test_checks_lists_what_is_installed_and_prints_manuals(run: Callable[..., Ou
 
 
 def test_a_reader_that_stops_early_does_not_change_the_status() -> None:
-    command = [sys.executable, "-m", "ifcjoints.cli", "checks"]
+    command = [sys.executable, "-m", "ifcjoints", "checks"]
     with subprocess.Popen(command, stdout=subprocess.PIPE, stderr=subprocess.PIPE) as process:
         assert process.stdout
         assert process.stderr
@@ -266,7 +266,7 @@ def written(tmp_path_factory: pytest.TempPathFactory) -> Callable[[Path], Path]:
             command = [
                 sys.executable,
                 "-m",
-                "ifcjoints.cli",
+                "ifcjoints",
                 "audit",
                 model,
                 "--actions",
@@ -303,7 +303,7 @@ class TestSampleModels:
     def test_writing_twice_is_writing_once(self, model: Path, written: Callable[[Path], Path], tmp_path: Path) -> None:
         once = written(model) / f"{model.stem}.joints.ifc"
         actions = model.with_suffix(".actions.csv")
-        command = [sys.executable, "-m", "ifcjoints.cli", "audit", once, "--actions", actions, "--out", tmp_path]
+        command = [sys.executable, "-m", "ifcjoints", "audit", once, "--actions", actions, "--out", tmp_path]
         assert subprocess.run(command, capture_output=True, check=False, timeout=600).returncode in (0, 1)
         assert (tmp_path / f"{once.stem}.joints.ifc").read_bytes() == once.read_bytes()
 
