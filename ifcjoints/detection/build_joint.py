@@ -29,6 +29,7 @@ from ..reading.cuts import Area, cut_area
 from ..settings import Settings
 from .carriers import Carrier
 from .describe import ProvenanceMap, describe_bolts, describe_member, describe_plate, mm, steel_grade_of
+from .designations import section_conflicts
 from .end_plates import EndConnection
 from .flanges import FlangeBand, outer_flanges
 from .groups import BoltGroup
@@ -77,6 +78,7 @@ def end_plate_joint(scene: Scene, group: BoltGroup, connection: EndConnection, c
         scene.settings.defaults,
         provenance,
     )
+    findings += section_conflicts(parts[each] for each in (connection.member, carrier.part) if each is not None)
     provenance["rows"] = Provenance(source="measured", detail="bolt axes against the flanges in the interface plane")
     interface = _interface(scene, connection, flanges, provenance) if flanges else None
     plates = tuple(
@@ -115,6 +117,7 @@ def plain_joint(scene: Scene, group: BoltGroup) -> Joint:
         nearest = min(members, key=lambda part: _distance_to_end(part, group))
         supported = describe_member(nearest, "supported", _end_at(nearest, group), scene.settings.defaults, provenance)
     bolts, findings = describe_bolts(group, scene.contents.bolts, held, scene.settings.defaults, provenance)
+    findings += section_conflicts(held)
     plates = tuple(
         describe_plate(part, "plate", None, scene.settings.defaults, provenance)
         for part in held
