@@ -49,10 +49,11 @@ class FastenerReader:
 
     def read(self, element: Any) -> list[Bolt]:
         """Return the bolts of one element: as many as its body shows, or one where it has none."""
-        texts = texts_of(element, element_util.get_type(element))
+        owner = element_util.get_type(element)
+        texts = texts_of(element, owner)
         kind = kind_of(element, texts)
         grade = self._grade(element, texts)
-        nominal = [self._nominal(element, name) for name in ("NominalDiameter", "NominalLength")]
+        nominal = [self._nominal(element, owner, name) for name in ("NominalDiameter", "NominalLength")]
         return [
             self._bolt(element, index, kind, grade, nominal, body)
             for index, body in enumerate(self._measured(element) or [None])
@@ -137,12 +138,12 @@ class FastenerReader:
             return stated[0], Provenance(source="read", detail=f"{stated[1]}, agrees with the shank")
         return body.length, Provenance(source="measured", detail="from the bolt's shank")
 
-    def _nominal(self, element: Any, name: str) -> tuple[Mm, str] | None:
+    def _nominal(self, element: Any, owner: Any, name: str) -> tuple[Mm, str] | None:
         """Return a stated size in mm, from the element, its type, or its name."""
-        for owner in (element, element_util.get_type(element)):
-            value = getattr(owner, name, None) if owner is not None else None
+        for each in (element, owner):
+            value = getattr(each, name, None) if each is not None else None
             if value:
-                return float(value) * self._length, f"{owner.is_a()}.{name}"
+                return float(value) * self._length, f"{each.is_a()}.{name}"
         return size_in_name(element, name)
 
     def _grade(self, element: Any, texts: Texts) -> tuple[str | None, Provenance | None]:
