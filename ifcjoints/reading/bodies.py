@@ -64,7 +64,8 @@ class PlacedPiece:
 _argument: Callable[[Any, int], Any] = getattr(
     ifcopenshell.entity_instance, "get_argument", ifcopenshell.entity_instance.__getitem__
 )
-"""An entity's attribute by number, past the check of the number: a third of the time of reading B-reps."""
+"""An entity's attribute by number, past the check of the number. Only for what is surely an entity: it does not
+look whether there is one, and a reference that dangles would end the process."""
 
 
 class BodyReader:
@@ -147,17 +148,19 @@ class BodyReader:
 
     def _shell(self, shell: Any) -> Solid:
         """Read a shell. Attributes are taken by number: names cost half of reading a model of B-reps."""
+        if shell is None:
+            raise Unreadable("a shell that its body refers to is not in the file")
         numbers: dict[int, int] = {}
         points: list[tuple[float, ...]] = []
         faces = []
-        for face in _argument(shell, 0):
-            bounds = _argument(face, 0)
+        for face in shell[0]:
+            bounds = face[0]
             if len(bounds) > 1:
                 bounds = sorted(bounds, key=lambda bound: not bound.is_a("IfcFaceOuterBound"))
             loops = []
             for bound in bounds:
                 loop = []
-                for point in _polygon(_argument(bound, 0)):
+                for point in _polygon(bound[0]):
                     key = point.id()
                     number = numbers.get(key)
                     if number is None:
@@ -165,7 +168,7 @@ class BodyReader:
                         points.append(_argument(point, 0))
                     loop.append(number)
                 if len(loop) >= 3:
-                    loops.append(loop if _argument(bound, 1) else loop[::-1])
+                    loops.append(loop if bound[1] else loop[::-1])
             if loops:
                 faces.append(loops)
         if len(faces) < 4:
