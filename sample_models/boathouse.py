@@ -10,7 +10,7 @@ from typing import Any
 
 import numpy as np
 
-from .end_plates import EndPlateDesign, Face, bolt_points
+from .end_plates import EndPlateDesign, Face, bolt_points, drill_behind
 from .making import INCH, at, box, circle, i_ring
 from .steelwork import ACROSS, ALONG, UP, Size, Steelwork
 from .truth import JointTruth, ModelTruth, rows_above
@@ -19,6 +19,7 @@ COLUMN: Size = (12.06 * INCH, 9.995 * INCH, 0.345 * INCH, 0.575 * INCH, 0.60 * I
 BEAM: Size = (15.86 * INCH, 6.985 * INCH, 0.295 * INCH, 0.43 * INCH, 0.40 * INCH)
 LEVEL = 132.0 * INCH
 LABEL = "3/4 in. A325N"
+HOLE = 13 / 16 * INCH
 PLATE = EndPlateDesign(
     (8.0 * INCH, 22.0 * INCH, 0.75 * INCH),
     (9.5 * INCH, 6.0 * INCH, -6.0 * INCH, -9.5 * INCH),
@@ -29,11 +30,12 @@ PLATE = EndPlateDesign(
 def build() -> tuple[Steelwork, ModelTruth]:
     """Return the model and what it holds."""
     steel = Steelwork("Heron Yard boathouse", schema="IFC2X3", unit=INCH)
-    _member(steel, "IfcColumn", "K1", "W12X53", COLUMN, at(0, 0, 0, UP, ACROSS), 168.0 * INCH)
+    column = _member(steel, "IfcColumn", "K1", "W12X53", COLUMN, at(0, 0, 0, UP, ACROSS), 168.0 * INCH)
     truth = []
     for name, out in (("L1", ALONG), ("L2", -ALONG)):
-        face = Face(np.array([0.0, 0.0, LEVEL]) + out * COLUMN[0] / 2, out, COLUMN[3])
+        face = Face(np.array([0.0, 0.0, LEVEL]) + out * COLUMN[0] / 2, out, COLUMN[3], column)
         _end_plate(steel, face, f"E{name}")
+        drill_behind(steel, face, PLATE, HOLE - PLATE.d)
         _beam(steel, face, name)
         _bolts_as_mapped_items(steel, face)
         truth.append(_truth(name, "K1", "beam_to_column_flange"))
@@ -55,12 +57,13 @@ def _truth(beam: str, other: str, configuration: str) -> JointTruth:
     )
 
 
-def _member(steel: Steelwork, kind: str, name: str, label: str, size: Size, place: np.ndarray, length: float) -> None:
+def _member(steel: Steelwork, kind: str, name: str, label: str, size: Size, place: np.ndarray, length: float) -> Any:
     body = steel.brep_prism([i_ring(*size, facets=4)], length)
     element = steel.element(
         kind, name, place, [steel.mapped([body], "Brep")], "MappedRepresentation", Description=label
     )
     steel.give_material(element, "A992")
+    return element
 
 
 def _beam(steel: Steelwork, face: Face, name: str) -> None:
@@ -72,7 +75,7 @@ def _end_plate(steel: Steelwork, face: Face, name: str) -> None:
     """Add an end plate as a B-rep with its holes as inner bounds."""
     place = at(*face.origin, axis=face.out, ref=face.across)
     local = [place[:3, :3].T @ (point - face.origin) for point in bolt_points(face, PLATE)]
-    holes = [circle(13 / 32 * INCH, 16, x, y) for x, y, _ in local]
+    holes = [circle(HOLE / 2, 16, x, y) for x, y, _ in local]
     body = steel.brep_prism([box(*PLATE.plate[:2]), *holes], PLATE.thickness)
     element = steel.element("IfcPlate", name, place, [body], "Brep")
     steel.give_material(element, "A36")

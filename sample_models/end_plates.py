@@ -59,9 +59,14 @@ def add_end_plate(steel: Steelwork, face: Face, design: EndPlateDesign, name: st
     points = bolt_points(face, design)
     steel.drill(plate, [point + face.out * t / 2 for point in points], face.out, design.d + hole, 2 * t)
     if face.part is not None:
-        middle = [point - face.out * face.behind / 2 for point in points]
-        steel.drill(face.part, middle, face.out, design.d + hole, 2 * face.behind)
+        drill_behind(steel, face, design, hole)
     return plate
+
+
+def drill_behind(steel: Steelwork, face: Face, design: EndPlateDesign, hole: float = 2.0) -> None:
+    """Drill the part behind the face for an end plate's bolts."""
+    middle = [point - face.out * face.behind / 2 for point in bolt_points(face, design)]
+    steel.drill(face.part, middle, face.out, design.d + hole, 2 * face.behind)
 
 
 def bolt_points(face: Face, design: EndPlateDesign) -> list[np.ndarray]:

@@ -90,7 +90,7 @@ def _fin_plate(steel: Steelwork, beam: object) -> None:
 
 def _cleats(steel: Steelwork, beam: object) -> None:
     """Add a secondary beam on the floor beam's web by two angle cleats."""
-    web, level = IPE_360[2] / 2, FLOOR + 50.0
+    web, level = IPE_360[2] / 2, FLOOR
     start = np.array([-2500.0, web + 10.0, level])
     secondary = steel.member("IfcBeam", "B4", IPE_240, "IPE 240", at(*start, axis=ACROSS, ref=ALONG), 3000.0)
     half = IPE_240[2] / 2

@@ -3,14 +3,15 @@
 from __future__ import annotations
 
 from collections.abc import Callable
+from datetime import datetime, timezone
 from pathlib import Path
 
 from . import boathouse, hall, mezzanine
-from .steelwork import Steelwork
+from .steelwork import CREATED, Steelwork
 from .truth import ModelTruth
 
 HERE = Path(__file__).parent
-STAMP = "2026-01-05T08:00:00"
+STAMP = datetime.fromtimestamp(CREATED, timezone.utc).strftime("%Y-%m-%dT%H:%M:%S")
 
 MODELS: dict[str, Callable[[], tuple[Steelwork, ModelTruth]]] = {
     "heron_yard_hall": hall.build,

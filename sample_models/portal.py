@@ -8,7 +8,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from .end_plates import EndPlateDesign, Face, add_bolts, add_end_plate
-from .making import at, box
+from .making import at
 from .steelwork import ACROSS, ALONG, HEB_300, IPE_400, UP, Size, Steelwork
 from .truth import JointTruth, on_slope, rows_above
 
@@ -65,6 +65,11 @@ class Portal:
         at_plate = self.axis_at_plate() - self.half_depth - self.haunch_depth
         return at_plate + (away - self.eaves_plate.thickness) * self.haunch_rise
 
+    @property
+    def haunch_upright(self) -> float:
+        """The haunch flange's thickness, as thick as the rafter's, as an upright plane cuts it."""
+        return self.rafter[3] * math.hypot(1.0, self.haunch_rise)
+
     def apex_height(self) -> float:
         """Height of the rafters' axes where they meet."""
         return self.eaves + (self.span / 2 - self.inner_face) * self.rise
@@ -110,38 +115,49 @@ def _eaves(steel: Steelwork, portal: Portal, face: Face, number: int) -> None:
     for index, level in enumerate(levels):
         for side in (1, -1):
             add_stiffener(steel, face, level, side, f"ST{number}{index}{'LR'[side > 0]}")
-    for index, level in enumerate(levels):
-        across = face.origin + face.out * portal.eaves_plate.thickness + UP * (level + 8.0 - face.origin[2])
-        steel.fillet_weld(f"W{number}{index}", 8.0, at(*(across - ACROSS * 85), axis=ACROSS, ref=face.out), 170.0)
+    _flange_welds(steel, portal, face, number)
+
+
+def _flange_welds(steel: Steelwork, portal: Portal, face: Face, number: int) -> None:
+    """Add the fillet welds on the outer faces of the rafter's top flange and the haunch's flange."""
+    t, width = portal.eaves_plate.thickness, portal.rafter[1]
+    top = portal.axis_at_plate() + portal.half_depth + on_slope(portal.rafter[3], portal.pitch) / 2
+    bottom = portal.haunch_flange_at(t) - portal.haunch_upright / 2
+    for index, (level, up, rise) in enumerate(((top, UP, portal.rise), (bottom, -UP, -portal.haunch_rise))):
+        along = np.cross(face.out, up)
+        start = face.origin * [1, 0, 0] + face.out * t + UP * level - along * width / 2
+        steel.fillet_weld(f"W{number}{index}", 8.0, at(*start, axis=along, ref=face.out), width, rise)
 
 
 def add_stiffener(steel: Steelwork, face: Face, level: float, side: int, name: str, column: Size = HEB_300) -> None:
-    """Add half a pair of stiffeners in a column, level with a beam's flange."""
-    h, b, tw, tf, _ = column
-    depth, width = h - 2 * tf, (b - tw) / 2 - 5.0
-    middle = face.origin - face.out * h / 2 + ACROSS * side * (tw + width) / 2
-    place = at(middle[0], middle[1], level - 6.0, UP, ALONG)
-    steel.plate(name, box(depth, width), 12.0, place)
+    """Add half a pair of stiffeners in a column, level with a beam's flange, its corners clear of the root fillets."""
+    h, b, tw, tf, r = column
+    half, width, snip = h / 2 - tf, (b - tw) / 2 - 5.0, r + 3.0
+    web = face.origin - face.out * h / 2 + ACROSS * side * tw / 2
+    ring = [
+        (-half, snip), (snip - half, 0.0), (half - snip, 0.0), (half, snip), (half, width), (-half, width),
+    ]  # fmt: skip
+    place = at(web[0], web[1], level - 6.0, UP, ALONG)
+    steel.plate(name, [(x, side * y) for x, y in ring], 12.0, place)
 
 
 def _haunch(steel: Steelwork, portal: Portal, face: Face, number: int) -> None:
     """Add a haunch of web and flange plate; outlines in a plane along the frame, x away from the column."""
-    t, tf = portal.eaves_plate.thickness, portal.rafter[3]
-    end = t + portal.haunch_length
-    half = tf / 2 * math.hypot(1.0, portal.haunch_rise)
-    under = portal.half_depth + on_slope(tf, portal.pitch) / 2
+    t, half = portal.eaves_plate.thickness, portal.haunch_upright / 2
+    under = portal.half_depth + on_slope(portal.rafter[3], portal.pitch) / 2
 
     def rafter_under(away: float) -> float:
         return portal.eaves + away * portal.rise - under
 
-    def flange_top(away: float) -> float:
-        return portal.haunch_flange_at(away) + half
+    def face_at_plate(side: int) -> tuple[float, float]:
+        return t, portal.haunch_flange_at(t) + side * half
 
-    meet = (rafter_under(0.0) - flange_top(0.0)) / (portal.haunch_rise - portal.rise)
-    web = [(t, flange_top(t)), (meet, rafter_under(meet)), (t, rafter_under(t))]
-    flange = [
-        (t, flange_top(t) - 2 * half), (end, flange_top(end) - 2 * half), (end, flange_top(end)), (t, flange_top(t)),
-    ]  # fmt: skip
+    def face_at_rafter(side: int) -> tuple[float, float]:
+        away = (rafter_under(0.0) - portal.haunch_flange_at(0.0) - side * half) / (portal.haunch_rise - portal.rise)
+        return away, rafter_under(away)
+
+    web = [face_at_plate(1), face_at_rafter(1), (t, rafter_under(t))]
+    flange = [face_at_plate(-1), face_at_rafter(-1), face_at_rafter(1), face_at_plate(1)]
     for name, ring, thickness in ((f"HW{number}", web, 8.6), (f"HF{number}", flange, portal.rafter[1])):
         sense = float(face.out @ ALONG)
         place = at(*(face.origin * [1, 0, 0]), axis=-ACROSS * sense, ref=face.out)

@@ -27,6 +27,9 @@ FASTENERS = {
 }
 """Across flats, head, nut and washer: ISO 4014, ISO 4032, ISO 7089; from memory washers and 3/4 in. heavy hex."""
 
+CREATED = 1767600000
+"""5 January 2026, 08:00 UTC, in seconds since 1970: when every made model says it was made."""
+
 UP, ACROSS, ALONG = np.array([0.0, 0.0, 1.0]), np.array([0.0, 1.0, 0.0]), np.array([1.0, 0.0, 0.0])
 
 
@@ -47,6 +50,26 @@ class Steelwork(Model):
         self._materials: dict[str, tuple[Any, Any]] = {}
         self._profile_sets: dict[str, tuple[Any, Any]] = {}
         self._bolt_types: dict[str, tuple[Any, Any]] = {}
+
+    def rooted(self, kind: str, **attributes: Any) -> Any:
+        """Create an entity with a GlobalId and, where the schema asks for one, the history all of them share."""
+        if self.file.schema == "IFC2X3":
+            attributes["OwnerHistory"] = self._history()
+        return super().rooted(kind, **attributes)
+
+    def _history(self) -> Any:
+        if self.file.by_type("IfcOwnerHistory"):
+            return self.file.by_type("IfcOwnerHistory")[0]
+        yard = self.add("IfcOrganization", Name="Heron Yard")
+        office = self.add("IfcPerson", FamilyName="Drawing office")
+        user = self.add("IfcPersonAndOrganization", ThePerson=office, TheOrganization=yard)
+        program = self.add(
+            "IfcApplication", ApplicationDeveloper=yard, Version="1",
+            ApplicationFullName="Sample models", ApplicationIdentifier="sample_models",
+        )  # fmt: skip
+        return self.add(
+            "IfcOwnerHistory", OwningUser=user, OwningApplication=program, ChangeAction="ADDED", CreationDate=CREATED
+        )
 
     def element(self, kind: str, name: str, matrix: np.ndarray, items: Sequence[Any], rep: str, **more: Any) -> Any:
         """Add an element to the storey."""
@@ -183,12 +206,12 @@ class Steelwork(Model):
         relation = self._bolt_types[label][1]
         relation.RelatedObjects = [*relation.RelatedObjects, *bolts]
 
-    def fillet_weld(self, name: str, throat: float, matrix: np.ndarray, length: float) -> Any:
-        """Add a fillet weld: a right-angled triangle along z, its legs along x and y."""
+    def fillet_weld(self, name: str, throat: float, matrix: np.ndarray, length: float, rise: float = 0.0) -> Any:
+        """Add a fillet weld along z: one leg along y, the other along x on a plate that rises by so much per length."""
         leg = throat * 2**0.5
-        body = self.extruded(self.outline([[(0, 0), (leg, 0), (0, leg)]]), length)
+        body = self.extruded(self.outline([[(0, 0), (leg, leg * rise), (0, leg)]]), length)
         kind = {"ObjectType": "WELD"} if self.file.schema == "IFC2X3" else {"PredefinedType": "WELD"}
         element = self.product("IfcFastener", name, matrix, [body], "SweptSolid", **kind)
         self.elements.append(element)
-        self.properties(element, "Pset_FastenerWeld", Type1="fillet", NominalThroatThickness=throat)
+        self.properties(element, "Pset_FastenerWeld", Type1="fillet", a=throat)
         return element
