@@ -12,6 +12,7 @@ from ..model.parts import Bolt, Part
 from ..settings import Settings
 from .build_joint import Scene, end_plate_joint, plain_joint
 from .carriers import find_carrier
+from .cover_plates import cover_plate_joint, cover_plate_splices
 from .end_plates import EndConnection, end_connections
 from .families import with_families
 from .groups import BoltGroup, group_bolts
@@ -46,7 +47,9 @@ def find_joints(contents: Contents, settings: Settings) -> Found:
     for number, passed in zip(structural, plies, strict=True):
         through[number] = passed
     groups = group_bolts(contents.bolts, through, settings.detection.axis_tolerance_deg)
-    joints = [joint for group in groups for joint in _joints_of(scene, group)]
+    splices, single = cover_plate_splices(groups, contents.parts)
+    joints = [joint for group in single for joint in _joints_of(scene, group)]
+    joints += [cover_plate_joint(scene, splice) for splice in splices]
     in_joints = {number for group in groups for number in group.bolts}
     left = [number for number in range(len(contents.bolts)) if number not in in_joints]
     elsewhere = _elsewhere(contents, left, through)
