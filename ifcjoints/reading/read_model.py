@@ -18,6 +18,7 @@ from ..model.parts import Bolt, Hole, MemberName, MemberShape, Part, WeldPart
 from ..model.units import Array, Mm
 from ..settings import ReadingSettings
 from .bodies import BodyReader, Piece, PlacedPiece
+from .built_up import join_built_up
 from .designations import read_designation
 from .fasteners import FastenerReader
 from .faults import body_faults, doubled_ids
@@ -93,6 +94,7 @@ class _Reading:
         near = near_bolts([pieces for _, pieces in bodies], bolts)
         opened = [body for body, is_near in zip(bodies, near, strict=True) if is_near]
         parts = [part for each in opened if (part := self._guarded(each[0], partial(self._part, pieces=each[1])))]
+        parts = join_built_up(parts, self._owners())
         progress("parts read", 1.0)
         names = tuple(self._names(each) for each in elements)
         self.problems += [Problem(element=who, message=what) for who, what in self.fasteners.conflicts]
@@ -192,6 +194,14 @@ class _Reading:
             if relation.RelatingBuildingElement is not None and relation.RelatedOpeningElement is not None:
                 found.setdefault(relation.RelatingBuildingElement.id(), []).append(relation.RelatedOpeningElement)
         return found
+
+    def _owners(self) -> dict[int, Any]:
+        """Return the element that aggregates another, by the other's step id."""
+        owners: dict[int, Any] = {}
+        for relation in self.file.by_type("IfcRelAggregates"):
+            if relation.RelatingObject is not None and relation.RelatingObject.is_a("IfcElement"):
+                owners.update((part.id(), relation.RelatingObject) for part in relation.RelatedObjects or ())
+        return owners
 
     def _names(self, element: Any) -> MemberName:
         texts = [element.Name, getattr(element, "Tag", None)]
