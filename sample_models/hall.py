@@ -36,9 +36,10 @@ def _floor_beam(steel: Steelwork, column: object) -> tuple[object, JointTruth]:
     """Add the lean-to's floor beam on the first column's outer flange, by an extended end plate."""
     h, tf = HEB_300[0], HEB_300[3]
     face = Face(np.array([-h / 2, 0.0, FLOOR]), -ALONG, tf, column)
-    add_end_plate(steel, face, FLOOR_PLATE, "EP3")
+    plate = add_end_plate(steel, face, FLOOR_PLATE, "EP3")
     beam = add_beam(steel, face, FLOOR_PLATE.thickness, "B1", (IPE_360, "IPE 360"), 4650.0)
-    add_bolts(steel, face, FLOOR_PLATE)
+    steel.assemble("A-B1", [beam, plate])
+    steel.connect(column, beam, [plate, *add_bolts(steel, face, FLOOR_PLATE)])
     half = (IPE_360[0] - IPE_360[3]) / 2
     rows = rows_above(-half, FLOOR_PLATE.rows)
     return beam, JointTruth("B1", "C1", "beam_to_column_flange", True, 8, 20.0, "8.8", 20.0, rows, 2 * half)

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 from dataclasses import dataclass
+from typing import Any
 
 import numpy as np
 
@@ -99,34 +100,37 @@ def add_portal(steel: Steelwork, portal: Portal) -> tuple[list, list[JointTruth]
     apex = Face(np.array([portal.span / 2, 0.0, portal.apex_height()]), -ALONG, portal.apex_plate.thickness)
     for number, (column, x, out) in enumerate(zip(columns, (0.0, portal.span), (ALONG, -ALONG), strict=True), 1):
         face = Face(np.array([x, 0.0, portal.eaves]) + out * portal.inner_face, out, portal.column[3], column)
-        _eaves(steel, portal, face, number)
-        _rafter(steel, portal, face, f"R{number}")
+        rafter, welded = _rafter(steel, portal, face, f"R{number}"), _eaves(steel, portal, face, number)
         half = Face(apex.origin, -out, portal.apex_plate.thickness)
-        add_end_plate(steel, half, portal.apex_plate, f"AP{number}")
+        apex_plate = add_end_plate(steel, half, portal.apex_plate, f"AP{number}")
+        steel.assemble(f"A-R{number}", [rafter, *welded, apex_plate])
+        steel.connect(column, rafter, [welded[0], *add_bolts(steel, face, portal.eaves_plate)])
     add_bolts(steel, apex, portal.apex_plate)
     return columns, [portal.eaves_truth(1), portal.eaves_truth(2), portal.apex_truth()]
 
 
-def _eaves(steel: Steelwork, portal: Portal, face: Face, number: int) -> None:
-    add_end_plate(steel, face, portal.eaves_plate, f"EP{number}")
-    add_bolts(steel, face, portal.eaves_plate)
-    _haunch(steel, portal, face, number)
+def _eaves(steel: Steelwork, portal: Portal, face: Face, number: int) -> list[Any]:
+    """Add the column's stiffeners and what is welded to the rafter; return the latter, the end plate first."""
     levels = (portal.eaves + portal.half_depth, portal.haunch_flange_at(0.0))
     for index, level in enumerate(levels):
         for side in (1, -1):
             add_stiffener(steel, face, level, side, f"ST{number}{index}{'LR'[side > 0]}")
-    _flange_welds(steel, portal, face, number)
+    plate = add_end_plate(steel, face, portal.eaves_plate, f"EP{number}")
+    return [plate, *_haunch(steel, portal, face, number), *_flange_welds(steel, portal, face, number)]
 
 
-def _flange_welds(steel: Steelwork, portal: Portal, face: Face, number: int) -> None:
+def _flange_welds(steel: Steelwork, portal: Portal, face: Face, number: int) -> list[Any]:
     """Add the fillet welds on the outer faces of the rafter's top flange and the haunch's flange."""
     t, width = portal.eaves_plate.thickness, portal.rafter[1]
     top = portal.axis_at_plate() + portal.half_depth + on_slope(portal.rafter[3], portal.pitch) / 2
     bottom = portal.haunch_flange_at(t) - portal.haunch_upright / 2
+    welds = []
     for index, (level, up, rise) in enumerate(((top, UP, portal.rise), (bottom, -UP, -portal.haunch_rise))):
         along = np.cross(face.out, up)
         start = face.origin * [1, 0, 0] + face.out * t + UP * level - along * width / 2
-        steel.fillet_weld(f"W{number}{index}", 8.0, at(*start, axis=along, ref=face.out), width, rise)
+        place = at(*start, axis=along, ref=face.out)
+        welds.append(steel.fillet_weld(f"W{number}{index}", 8.0, place, width, rise))
+    return welds
 
 
 def add_stiffener(steel: Steelwork, face: Face, level: float, side: int, name: str, column: Size = HEB_300) -> None:
@@ -141,7 +145,7 @@ def add_stiffener(steel: Steelwork, face: Face, level: float, side: int, name: s
     steel.plate(name, [(x, side * y) for x, y in ring], 12.0, place)
 
 
-def _haunch(steel: Steelwork, portal: Portal, face: Face, number: int) -> None:
+def _haunch(steel: Steelwork, portal: Portal, face: Face, number: int) -> list[Any]:
     """Add a haunch of web and flange plate; outlines in a plane along the frame, x away from the column."""
     t, half = portal.eaves_plate.thickness, portal.haunch_upright / 2
     under = portal.half_depth + on_slope(portal.rafter[3], portal.pitch) / 2
@@ -158,14 +162,16 @@ def _haunch(steel: Steelwork, portal: Portal, face: Face, number: int) -> None:
 
     web = [face_at_plate(1), face_at_rafter(1), (t, rafter_under(t))]
     flange = [face_at_plate(-1), face_at_rafter(-1), face_at_rafter(1), face_at_plate(1)]
+    plates = []
     for name, ring, thickness in ((f"HW{number}", web, 8.6), (f"HF{number}", flange, portal.rafter[1])):
         sense = float(face.out @ ALONG)
         place = at(*(face.origin * [1, 0, 0]), axis=-ACROSS * sense, ref=face.out)
         place[:3, 3] += ACROSS * sense * thickness / 2
-        steel.plate(name, ring, thickness, place)
+        plates.append(steel.plate(name, ring, thickness, place))
+    return plates
 
 
-def _rafter(steel: Steelwork, portal: Portal, face: Face, name: str) -> None:
+def _rafter(steel: Steelwork, portal: Portal, face: Face, name: str) -> Any:
     """Add a rafter cut upright at both ends: on the eaves' end plate and on the apex's."""
     run = face.out * math.cos(math.radians(portal.pitch)) + UP * math.sin(math.radians(portal.pitch))
     start = face.origin + run * portal.eaves_plate.thickness / (run @ face.out)
@@ -176,4 +182,4 @@ def _rafter(steel: Steelwork, portal: Portal, face: Face, name: str) -> None:
     towards = place[:3, :3].T @ face.out
     reach = portal.rafter[0] * portal.rise
     cuts = [at(axis=-towards), at(z=length, axis=towards)]
-    steel.cut_member(name, portal.rafter, "IPE 400", place, (-reach, length + reach), cuts)
+    return steel.cut_member(name, portal.rafter, "IPE 400", place, (-reach, length + reach), cuts)

@@ -6,6 +6,7 @@ from collections.abc import Sequence
 from typing import Any
 
 import numpy as np
+from ifcopenshell.util.placement import get_local_placement
 
 from .making import Model, Ring, at, circle
 
@@ -76,6 +77,33 @@ class Steelwork(Model):
         made = self.product(kind, name, matrix, items, rep, Tag=name, **more)
         self.elements.append(made)
         return made
+
+    def assemble(self, name: str, parts: Sequence[Any]) -> Any:
+        """Put parts into an assembly, the main one first: it gives the place that all their places are told from."""
+        places = [self._place(part) for part in parts]
+        placement = self.placement(places[0])
+        for part, place in zip(parts, places, strict=True):
+            part.ObjectPlacement = self.placement(np.linalg.inv(places[0]) @ place, placement)
+            self.elements.remove(part)
+        assembly = self.rooted(
+            "IfcElementAssembly", Name=name, Tag=name, ObjectPlacement=placement, AssemblyPlace="FACTORY"
+        )
+        self.rooted("IfcRelAggregates", RelatingObject=assembly, RelatedObjects=list(parts))
+        self.elements.append(assembly)
+        return assembly
+
+    def _place(self, element: Any) -> np.ndarray:
+        """Return where an element stands in the world, in mm."""
+        matrix = get_local_placement(element.ObjectPlacement)
+        matrix[:3, 3] *= self.unit
+        return matrix
+
+    def connect(self, carrier: Any, carried: Any, by: Sequence[Any]) -> None:
+        """Say that one member is connected to another by plates and bolts."""
+        self.rooted(
+            "IfcRelConnectsWithRealizingElements",
+            RelatingElement=carrier, RelatedElement=carried, RealizingElements=list(by), ConnectionType="bolted",
+        )  # fmt: skip
 
     def finish(self) -> None:
         """Put all elements into the storey. Call once, last."""
