@@ -204,6 +204,27 @@ class Solid:
         """The corners of the axis-parallel box around the solid."""
         return self.vertices.min(axis=0), self.vertices.max(axis=0)
 
+    def bodies(self) -> list[Solid]:
+        """Return the bodies that share no face and no vertex with one another, each as a solid."""
+        label = np.arange(len(self.vertices))
+        before = np.full_like(label, -1)
+        face_start = self.loop_start[self.is_outer]
+        while not np.array_equal(label, before):
+            before = label.copy()
+            lowest = np.minimum.reduceat(label[self.corners], face_start)
+            np.minimum.at(label, self.corners, lowest[self.corner_face])
+            label = label[label]
+        of_face = label[self.corners[self.loop_start]]
+        return [self] if np.ptp(of_face) == 0 else [self._part(of_face == name) for name in np.unique(of_face)]
+
+    def _part(self, loops: npt.NDArray[np.bool_]) -> Solid:
+        """Return the solid that some of the loops bound."""
+        kept = loops[self.corner_loop]
+        used, corners = np.unique(self.corners[kept], return_inverse=True)
+        lengths = np.diff(np.append(self.loop_start, len(self.corners)))[loops]
+        faces = np.unique(self.loop_face[loops], return_inverse=True)[1]
+        return Solid(self.vertices[used], corners, np.cumsum(lengths) - lengths, faces)
+
     def extent(self, direction: Array) -> tuple[float, float]:
         """Return the least and greatest coordinate along a unit direction."""
         along = self.vertices @ direction

@@ -14,6 +14,10 @@ SYMMETRY = 0.06
 """How far the two spreads across the axis may differ, as a share of the larger spread."""
 
 COAXIAL: Mm = 1.5
+LONGEST_NUT: Mm = 60.0
+WIDEST_NUT: Mm = 60.0
+"""Length and radius that no nut or washer of steelwork exceeds; common practice, no source."""
+
 WIDER = 1.25
 """A head or nut is at least this many times as wide as the shank."""
 
@@ -49,7 +53,7 @@ class BoltBody:
     point: Array
     direction: Array
     length: Mm
-    diameter: Mm
+    diameter: Mm | None
     has_head: bool
 
     def moved(self, matrix: Array) -> BoltBody:
@@ -73,6 +77,31 @@ def as_turned(placed: PlacedPiece) -> TurnedBody | None:
     local = sweep.plane[:3, :2] @ middle + sweep.plane[:3, 3]
     step = Step(0.0, sweep.length, sweep.profile.radius or radius, len(rings) > 1)
     return TurnedBody(turn @ local + shift, turn @ unit(sweep.along), (step,))
+
+
+def turned_bodies(pieces: list[PlacedPiece]) -> list[TurnedBody]:
+    """Return the turned bodies among pieces; a shell that holds several bodies is taken apart first."""
+    found = []
+    for placed in pieces:
+        if placed.piece.sweep is not None:
+            found.append(as_turned(placed))
+        else:
+            found += [_from_edges(body) for body in placed.in_world().bodies()]
+    return [body for body in found if body is not None]
+
+
+def is_nut_or_washer(pieces: list[PlacedPiece]) -> bool:
+    """Whether a part is a loose nut or washer: rings about an axis, no larger than those of steelwork."""
+    sizes = [np.ptp(placed.piece.solid.bounds, axis=0).max() for placed in pieces]
+    if max(sizes) > 2 * WIDEST_NUT:
+        return False
+    steps = [step for body in turned_bodies(pieces) for step in body.steps]
+    return bool(steps) and all(step.hollow for step in steps) and _is_small(steps)
+
+
+def _is_small(steps: list[Step]) -> bool:
+    low, high = _reach(steps)
+    return high - low <= LONGEST_NUT and max(step.radius for step in steps) <= WIDEST_NUT
 
 
 def bolts_of(bodies: list[TurnedBody]) -> list[BoltBody]:

@@ -18,7 +18,7 @@ from ..model.units import Array, Mm
 from .clippings import end_clipped, first_operand, half_space
 from .kernel import solid_of_item
 from .placements import Placements, is_rigid
-from .profiles import Profile, read_profile
+from .profiles import Profile, circle_profile, read_profile
 from .units import Units
 from .unreadable import Unreadable
 
@@ -68,6 +68,9 @@ _argument: Callable[[Any, int], Any] = getattr(
 look whether there is one, and a reference that dangles would end the process."""
 
 
+UP = np.array([0.0, 0.0, 1.0])
+
+
 class BodyReader:
     """Reads the solids of representation items; each item is read once."""
 
@@ -86,7 +89,9 @@ class BodyReader:
             "IfcTriangulatedFaceSet": self._triangulated,
             "IfcMappedItem": self._mapped,
             "IfcBooleanClippingResult": self._clipped,
-            "IfcBooleanResult": self._clipped,
+            "IfcBooleanResult": self._combined,
+            "IfcCsgSolid": lambda item: self.item(item.TreeRootExpression),
+            "IfcRightCircularCylinder": self._cylinder,
         }
 
     def pieces(self, element: Any) -> list[PlacedPiece]:
@@ -123,6 +128,17 @@ class BodyReader:
             cut_from = placed.piece.sweep
         return [PlacedPiece(Piece(solid_of_item(item), cut_from=cut_from), np.eye(4))]
 
+    def _combined(self, item: Any) -> list[PlacedPiece]:
+        """Read a union as its two bodies side by side, a difference as a clipping."""
+        if item.Operator == "UNION":
+            return [*self.item(item.FirstOperand), *self.item(item.SecondOperand)]
+        return self._clipped(item)
+
+    def _cylinder(self, item: Any) -> list[PlacedPiece]:
+        """Read a cylinder as the extrusion of its circle."""
+        profile = circle_profile(item.Radius * self._placements.length)
+        return self._swept(profile, self._placements.axes(item.Position), item.Height * self._placements.length * UP)
+
     def _clipped(self, item: Any) -> list[PlacedPiece]:
         """Read an extrusion whose ends half-spaces have cut; Unreadable for cuts of any other kind."""
         base = self.item(item.FirstOperand)
@@ -138,6 +154,9 @@ class BodyReader:
         plane = self._placements.axes(item.Position)
         direction = np.array(item.ExtrudedDirection.DirectionRatios, float)
         along = direction / np.linalg.norm(direction) * item.Depth * self._placements.length
+        return self._swept(profile, plane, along)
+
+    def _swept(self, profile: Profile, plane: Array, along: Array) -> list[PlacedPiece]:
         if not np.linalg.norm(along) > 1e-6:
             raise Unreadable("its extrusion has no depth")
         solid = Solid.extruded(profile.rings, plane, along)

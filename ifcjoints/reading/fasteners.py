@@ -11,8 +11,9 @@ from ..model.joints import Provenance
 from ..model.parts import Bolt, BoltKind
 from ..model.units import Array, Mm
 from ..tables.bolts import bolt_grade
-from .axial import BoltBody, as_turned, bolts_of
+from .axial import BoltBody, bolts_of, turned_bodies
 from .bodies import BodyReader
+from .bolt_lines import bolts_from_lines
 from .properties import property_texts
 from .unreadable import Unreadable
 
@@ -68,10 +69,10 @@ class FastenerReader:
             return []
         key = tuple((id(placed.piece), placed.matrix.tobytes()) for placed in pieces)
         if key not in self._shapes:
-            turned = [body for piece in pieces if (body := as_turned(piece)) is not None]
-            self._shapes[key] = bolts_of(turned)
+            self._shapes[key] = bolts_of(turned_bodies(pieces))
+        bolts = self._shapes[key] or bolts_from_lines(element, self._length)
         world = self._bodies.world_of(element)
-        return [body.moved(world) for body in self._shapes[key]]
+        return [body.moved(world) for body in bolts]
 
     def _bolt(
         self,

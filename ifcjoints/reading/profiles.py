@@ -47,6 +47,12 @@ def read_profile(profile: Any, placements: Placements, angle_unit: float) -> Pro
     raise Unreadable(f"its profile is an {profile.is_a()}")
 
 
+def circle_profile(radius: Mm) -> Profile:
+    """Return a circle about the origin."""
+    rings, dimensions, _ = _circle(lambda _name: radius)
+    return Profile(tuple(rings), dimensions=dimensions, placed=np.eye(4), radius=radius)
+
+
 def _derived(profile: Any, placements: Placements, angle_unit: float) -> Profile:
     parent = read_profile(profile.ParentProfile, placements, angle_unit)
     if profile.is_a("IfcMirroredProfileDef"):

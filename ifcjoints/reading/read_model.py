@@ -17,6 +17,7 @@ from ..model.geometry import Frame, Prism, Solid
 from ..model.parts import Bolt, Hole, MemberName, MemberShape, Part, WeldPart
 from ..model.units import Array, Mm
 from ..settings import ReadingSettings
+from .axial import is_nut_or_washer
 from .bodies import BodyReader, Piece, PlacedPiece
 from .built_up import join_built_up
 from .designations import read_designation
@@ -92,7 +93,7 @@ class _Reading:
             if number % 200 == 0:
                 progress("bodies read", 0.2 + 0.6 * number / len(elements))
         near = near_bolts([pieces for _, pieces in bodies], bolts)
-        opened = [body for body, is_near in zip(bodies, near, strict=True) if is_near]
+        opened = [body for body, is_near in zip(bodies, near, strict=True) if is_near and not is_nut_or_washer(body[1])]
         parts = [part for each in opened if (part := self._guarded(each[0], partial(self._part, pieces=each[1])))]
         parts = join_built_up(parts, self._owners())
         progress("parts read", 1.0)
