@@ -33,7 +33,7 @@ from .designations import section_conflicts
 from .end_plates import EndConnection
 from .flanges import FlangeBand, outer_flanges
 from .groups import BoltGroup
-from .moment_rule import judge
+from .moment_rule import base_plate_reason, judge
 from .neighbours import carrier_plates, standing_roles, welds_of
 from .plies import PartIndex
 from .rows import bolts_in_plane, find_rows
@@ -68,6 +68,8 @@ def end_plate_joint(scene: Scene, group: BoltGroup, connection: EndConnection, c
         _carrier_name(carrier, group, parts),
     )
     moment, why = judge(names, flanges, connection.outline, rows, scene.settings.detection.flange_cover)
+    if carrier.configuration == "base_plate":
+        moment, why = False, base_plate_reason(names)
     provenance: ProvenanceMap = {}
     supported, supporting = _members(scene, connection, carrier, provenance)
     roles = _roles(scene, connection, carrier, flanges)

@@ -44,7 +44,12 @@ def find_carrier(
             backing = tuple(each for each in beyond[depth + 1 :] if _is_backing(each, others, parts))
             return Carrier(number, _onto_member(connection, parts[number]), None, tuple(packs), backing)
         packs.append(number)
-    return Carrier(None, "other", None, tuple(packs))
+    return Carrier(None, "base_plate" if _is_foot(connection) else "other", None, tuple(packs))
+
+
+def _is_foot(connection: EndConnection) -> bool:
+    """Whether an upright member stands on the plate by its foot."""
+    return bool(abs(connection.shape.axis[2]) >= UPRIGHT and connection.frame.axes[2][2] >= UPRIGHT)
 
 
 def _is_backing(number: int, others: Sequence[EndConnection], parts: Sequence[Part]) -> bool:

@@ -42,6 +42,15 @@ def judge(
     return _by_lever_arm(names, rows, distance)
 
 
+def base_plate_reason(names: tuple[str, str, str]) -> str:
+    """Return why a column's foot is no moment joint here: it does not press on the far side by its flange alone."""
+    plate, member, other = names
+    return (
+        f"a base plate: {member} stands by its foot on {plate}, bolted to {other}; it bears on what is below over "
+        "an area, which the methods for end plates do not cover"
+    )
+
+
 def _by_lever_arm(names: tuple[str, str, str], rows: Sequence[Row], distance: Mm) -> tuple[bool, str]:
     plate, member, other = names
     arms = [max(row.y_bottom_mm, row.y_top_mm) for row in rows]
