@@ -60,7 +60,7 @@ def audit(
         generator=Generator(name="ifcjoints", version=version("ifcjoints")),
         model=contents.model,
         basis=_record(basis, Path(actions) if actions is not None else None),
-        problems=(*contents.problems, *(Problem(element=None, message=note) for note in notes)),
+        problems=(*contents.problems, *found.problems, *(Problem(element=None, message=note) for note in notes)),
         settings=_in_force(settings, {name: each.model_dump(mode="json") for name, each in options.items()}),
         installed_checks=tuple(_info(each) for each in checks),
         joints=joints,

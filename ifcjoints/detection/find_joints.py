@@ -7,6 +7,7 @@ from dataclasses import dataclass
 
 from ..model.audit import Coverage, Elsewhere
 from ..model.contents import Contents
+from ..model.findings import Problem
 from ..model.joints import Joint
 from ..model.parts import Bolt, Part
 from ..settings import Settings
@@ -30,11 +31,12 @@ KIND_NAMES = {
 
 @dataclass(frozen=True, slots=True)
 class Found:
-    """The joints of a model, and the bolts that are in none."""
+    """The joints of a model, the bolts that are in none, and what was noticed of the model as a whole."""
 
     joints: tuple[Joint, ...]
     coverage: Coverage
     elsewhere: tuple[Elsewhere, ...]
+    problems: tuple[Problem, ...] = ()
 
 
 def find_joints(contents: Contents, settings: Settings) -> Found:
@@ -61,7 +63,14 @@ def find_joints(contents: Contents, settings: Settings) -> Found:
     )
     if coverage.bolts != coverage.bolts_in_joints + coverage.bolts_elsewhere:
         raise AssertionError(f"bolts were lost: {coverage}")
-    return Found(tuple(_identified(joints)), coverage, elsewhere)
+    return Found(tuple(_identified(joints)), coverage, elsewhere, _without_holes(joints))
+
+
+def _without_holes(joints: Sequence[Joint]) -> tuple[Problem, ...]:
+    """Say once, for the whole model, that its parts have no holes."""
+    if not joints or any(joint.bolts.hole_diameter_mm is not None for joint in joints):
+        return ()
+    return (Problem(element=None, message="the model has no holes at its bolts, so hole sizes are not known"),)
 
 
 def _joints_of(scene: Scene, group: BoltGroup) -> list[Joint]:
