@@ -35,9 +35,7 @@ class MatchedActions(NamedTuple):
     notes: tuple[str, ...]
 
 
-def match_actions(
-    rows: Iterable[ActionRow], members: Iterable[MemberName], joints: Sequence[Joint]
-) -> MatchedActions:
+def match_actions(rows: Iterable[ActionRow], members: Iterable[MemberName], joints: Sequence[Joint]) -> MatchedActions:
     """Match rows of design actions to joints.
 
     Raises ActionsError for a member that the model does not know and for two rows that give one case at
@@ -62,9 +60,7 @@ def match_actions(
     return MatchedActions(by_joint, tuple(notes))
 
 
-def _resolve(
-    rows: Sequence[ActionRow], members: Iterable[MemberName]
-) -> tuple[dict[int, tuple[str, ...]], list[str]]:
+def _resolve(rows: Sequence[ActionRow], members: Iterable[MemberName]) -> tuple[dict[int, tuple[str, ...]], list[str]]:
     """Return the GlobalIds that each row names, by its line, and notes on names borne by several."""
     global_ids: set[str] = set()
     bearers: dict[str, dict[str, None]] = {}
@@ -78,13 +74,10 @@ def _resolve(
         found = (row.member,) if row.member in global_ids else tuple(bearers.get(row.member, ()))
         if not found:
             raise ActionsError(
-                f'{row.action.source}: the model has no member "{row.member}" '
-                "(by GlobalId, tag, name or mark)."
+                f'{row.action.source}: the model has no member "{row.member}" (by GlobalId, tag, name or mark).'
             )
         if len(found) > 1:
-            notes.append(
-                f'{row.action.source}: {len(found)} elements are called "{row.member}"; the row acts on each.'
-            )
+            notes.append(f'{row.action.source}: {len(found)} elements are called "{row.member}"; the row acts on each.')
         named[row.line] = found
     return named, notes
 
@@ -127,9 +120,7 @@ def _with_other_side(
                 f"give the case at {joint.supported.name if joint.supported else 'the other member'}."
             )
         elif not obstacle:
-            turned = given.model_copy(
-                update={"forces": given.forces.model_copy(update={"V_kN": -given.forces.V_kN})}
-            )
+            turned = given.model_copy(update={"forces": given.forces.model_copy(update={"V_kN": -given.forces.V_kN})})
             if not _same(merged.setdefault(case, turned), turned):
                 raise ActionsError(
                     f"{given.source}: case {case} on one side of the splice {joint.name} does not balance "
@@ -164,9 +155,7 @@ def _unused(
         ends = {end for name, end in reached if name in named[row.line]}
         if not (row.end in ends if row.end else ends):
             where = f"its {row.end}" if row.end else "either end"
-            notes.append(
-                f"{row.action.source}: {row.member} has no bolted joint at {where}; the row is not used."
-            )
+            notes.append(f"{row.action.source}: {row.member} has no bolted joint at {where}; the row is not used.")
     return notes
 
 

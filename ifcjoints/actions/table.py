@@ -107,15 +107,11 @@ def _row(place: str, line: int, cells: list[str], order: list[int]) -> ActionRow
         raise ActionsError(f"{place}: the {'case' if member else 'member'} is not named.")
     if end.lower() not in ENDS:
         raise ActionsError(f'{place}: the end "{end}" is neither start nor end; leave it empty for both.')
-    forces = Forces(
-        **{name: _number(place, name, text) for name, text in zip(COLUMNS[3:], figures, strict=True)}
-    )
+    forces = Forces(**{name: _number(place, name, text) for name, text in zip(COLUMNS[3:], figures, strict=True)})
     return ActionRow(line, member, ENDS[end.lower()], Action(case=case, forces=forces, source=place))
 
 
 def _number(place: str, column: str, text: str) -> float:
     if not _NUMBER.fullmatch(text) or not math.isfinite(float(text)):
-        raise ActionsError(
-            f'{place}: {column} is "{text}", which is no plain number (write 12.5; no comma, no unit).'
-        )
+        raise ActionsError(f'{place}: {column} is "{text}", which is no plain number (write 12.5; no comma, no unit).')
     return float(text)

@@ -30,17 +30,13 @@ def member(global_id: str, end: MemberEnd | None) -> JointMember:
     return JointMember(global_id=global_id, name=global_id, end=end, section=None, grade=None)
 
 
-def joint(
-    name: str, supported: JointMember | None, supporting: JointMember | None = None, **fields: Any
-) -> Joint:
+def joint(name: str, supported: JointMember | None, supporting: JointMember | None = None, **fields: Any) -> Joint:
     defaults: dict[str, Any] = {
         "configuration": "beam_to_column_flange",
         "moment_joint": True,
         "why": "",
         "family": "F01",
-        "bolts": JointBolts(
-            global_ids=(), count=4, diameter_mm=20, grade=None, hole_diameter_mm=None, grip_mm=None
-        ),
+        "bolts": JointBolts(global_ids=(), count=4, diameter_mm=20, grade=None, hole_diameter_mm=None, grip_mm=None),
         "completeness": 1.0,
     }
     ends = {"supported": supported, "supporting": supporting}
@@ -114,9 +110,7 @@ def test_both_sides_of_a_splice_that_balance_are_one_action() -> None:
     assert matched.notes == ()
 
 
-@pytest.mark.parametrize(
-    "forces", [{"V_kN": -30, "M_kNm": 80}, {"V_kN": 30, "M_kNm": -80}, {"V_kN": 30, "M_kNm": 81}]
-)
+@pytest.mark.parametrize("forces", [{"V_kN": -30, "M_kNm": 80}, {"V_kN": 30, "M_kNm": -80}, {"V_kN": 30, "M_kNm": 81}])
 def test_sides_of_a_splice_that_do_not_balance_are_named(forces: dict[str, float]) -> None:
     rows = [row(2, "R1", "end", V_kN=-30, M_kNm=80), row(3, "R2", "start", **forces)]
     with pytest.raises(ActionsError, match=r"line 3: case LC1 .* does not balance loads.csv, line 2"):
