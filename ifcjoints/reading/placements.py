@@ -40,8 +40,9 @@ class Placements:
             placement = getattr(placement, "PlacementRelTo", None)
         matrix = self._known[placement.id()] if placement is not None else np.eye(4)
         for link in reversed(chain):
-            if link.is_a("IfcLocalPlacement"):
-                matrix = matrix @ self.axes(link.RelativePlacement)
+            if not link.is_a("IfcLocalPlacement"):
+                raise ValueError(f"its place is given by an {link.is_a()}, which is not read")
+            matrix = matrix @ self.axes(link.RelativePlacement)
             self._known[link.id()] = matrix
         return matrix
 

@@ -19,7 +19,7 @@ SLENDERNESS = 0.7
 """The most that a plate's thickness may be of its lesser side."""
 
 SOLIDITY = 0.42
-"""The least share of its bounding rectangle that a thick plate fills; a rolled section fills less."""
+"""What fills this share of its bounding rectangle is a plate; what fills less may be a piece of a rolled section."""
 
 THIN: Mm = 12.0
 """Thinner than this, a plate may have any outline."""
@@ -100,4 +100,7 @@ def _looks_like_plate(prism: Prism) -> bool:
     sides = np.linalg.norm(np.diff(box[:3], axis=0), axis=1)
     if prism.thickness > SLENDERNESS * sides.min():
         return False
-    return prism.thickness <= THIN or outline.area > SOLIDITY * sides[0] * sides[1]
+    if prism.thickness <= THIN or outline.area > SOLIDITY * sides[0] * sides[1]:
+        return True
+    # An angle or a frame cut from thick plate is still wider than thick; a short piece of a rolled section is not.
+    return not outline.buffer(-0.5 * prism.thickness).is_empty
