@@ -122,7 +122,12 @@ def _plain_errors() -> Iterator[None]:
 
 
 def _say(message: str) -> None:
-    print(f"ifcjoints: {' '.join(message.split())}", file=sys.stderr)
+    print(f"ifcjoints: {_printable(' '.join(message.split()))}", file=sys.stderr)
+
+
+def _printable(text: str) -> str:
+    """Take out what would steer the terminal: a model's names may hold anything."""
+    return "".join(character if character.isprintable() else "\N{REPLACEMENT CHARACTER}" for character in text)
 
 
 @contextmanager
@@ -164,7 +169,7 @@ def _print_summary(console: Console, found: Audit, written: tuple[Path, ...]) ->
     if joints:
         table = _table("joint", "kind", "rows", "result", "utilisation", "governing")
         for joint in joints[:LONGEST_SUMMARY]:
-            table.add_row(*map(Text, _summary_cells(joint)))
+            table.add_row(*(Text(_printable(cell)) for cell in _summary_cells(joint)))
         console.print(table)
         if len(joints) > LONGEST_SUMMARY:
             console.print(f"… and {len(joints) - LONGEST_SUMMARY} more in the results.")

@@ -1,6 +1,7 @@
 from __future__ import annotations
 
 import json
+import re
 import subprocess
 import sys
 from collections.abc import Callable
@@ -236,6 +237,19 @@ def test_checks_lists_what_is_installed_and_prints_manuals(run: Callable[..., Ou
     for heading in ("What it checks", "Why it matters", "Method and clause", "Needs", "Limits", "Example"):
         assert heading in manual
     assert "[" in run("checks", "bolt_group.plastic").out
+
+
+def test_names_in_a_model_cannot_steer_the_terminal(run: Callable[..., Outcome], tmp_path: Path) -> None:
+    text = SAMPLES[0].read_text(encoding="utf-8")
+    model = tmp_path / "model.ifc"
+    # Escape, "[2J" and a line break in front of every name that begins with a capital letter and a digit
+    model.write_text(re.sub(r"'([A-Z]\d)'", r"'\\X2\\001B\\X0\\[2J\\X2\\000A\\X0\\\1'", text), encoding="utf-8")
+    outcome = run("audit", model, "--out", tmp_path / "out")
+    assert "[2J" in outcome.out
+    assert "\x1b" not in outcome.out
+    actions = tmp_path / "loads.csv"
+    actions.write_text(HEADER + "\x1b[2J,start,LC1,0,0,1\n")
+    assert "\x1b" not in one_line(run("audit", model, "--actions", actions, "--out", tmp_path / "out"))
 
 
 def test_a_reader_that_stops_early_does_not_change_the_status() -> None:
