@@ -8,32 +8,39 @@ from typing import Any
 import ifcopenshell.util.element as element_util
 
 from .bodies import PlacedPiece
-from .properties import property_texts
+from .properties import PropertyTable
 
-SERIES = (
-    r"IPE|IPN|HE\s?[ABM]?|HEA|HEB|HEM|HD|HL|HP|UPN|UPE|UB|UC|UKB|UKC|UKPFC|PFC"
-    r"|W|WT|HSS|TS|PIPE|RHS|SHS|CHS|MC|C|S|M|L|T"
-)
+BY_DEPTH = r"IPE|IPN|HE|HEA|HEB|HEM|HEAA|UPN|UPE|UNP|INP|PIPE"
+"""Series whose sections are named by one number, the depth, and perhaps a variant: HE 240 B, IPE 400 A."""
+
+BY_SIZES = r"W|WT|HP|MC|C|S|M|ST|MT|L|T|HSS|TS|HD|HL|RHS|SHS|CHS|UB|UC|UKB|UKC|PFC|UKPFC|U|I|H"
+"""Series named by sizes or by depth and mass, with a cross between: W16x36, L100x100x10. A mark such as C1 is none."""
+
+NUMBER, CROSS = r"(?:(?:\d+[- ])?\d+/\d+|\d+(?:[.,]\d+)?)", r"\s?[x×*]\s?"
 PATTERN = re.compile(
-    rf"\b(?:(?:{SERIES})[\s-]?\d[\w./-]*(?:\s?x\s?[\d./-]+)*"
-    r"|\d{2,4}\s?x\s?\d{2,4}\s?x\s?\d{1,4}\s?(?:UKB|UKC|UB|UC))\b",
+    rf"(?<![A-Z0-9])(?:(?:{BY_DEPTH})[\s-]?\d{{2,4}}(?:\s?(?:AA|A|B|M|O|R|V))?(?![A-Z0-9])"
+    rf"|PIPE\s?{NUMBER}\s?(?:STD|XS|XXS)"
+    rf"|(?:{BY_SIZES})[\s-]?{NUMBER}(?:{CROSS}{NUMBER}){{1,3}}(?![A-Z0-9])"
+    rf"|{NUMBER}(?:{CROSS}{NUMBER}){{2}}\s?(?:UKB|UKC|UB|UC|PFC|UKPFC)(?![A-Z0-9]))",
     re.IGNORECASE,
 )
-"""A series and its size, or a size and its series: the shape of a designation, not a list of sections."""
+"""The shape of a designation, not a list of sections."""
 
 
-def read_designation(element: Any, pieces: list[PlacedPiece], names: tuple[str, ...]) -> str | None:
+def read_designation(element: Any, pieces: list[PlacedPiece], properties: PropertyTable) -> str | None:
     """Return the section's name from the profile, the material's profile set, a property or the element's texts."""
     for placed in pieces:
         if placed.piece.sweep is not None and placed.piece.sweep.profile.name:
             found = PATTERN.search(placed.piece.sweep.profile.name)
             if found:
                 return placed.piece.sweep.profile.name
-    texts = [_profile_set_name(element), *(text for text, _ in property_texts(element, names))]
-    texts += [getattr(element, name, None) for name in ("Description", "Name", "ObjectType")]
-    for text in texts:
+    texts: list[tuple[str | None, str | None]] = [(_profile_set_name(element), None)]
+    texts += [(str(stated.value), stated.origin) for stated in properties.stated(element, "designation")]
+    texts += [(getattr(element, name, None), None) for name in ("Description", "Name", "ObjectType")]
+    for text, origin in texts:
         found = PATTERN.search(text) if text else None
         if found:
+            properties.used.update([origin] if origin else [])
             return found.group(0)
     return None
 
