@@ -20,6 +20,7 @@ GAUGE = "gauge"
 """Under this the gauge stands that all rows share; each row's own stands besides."""
 
 Key = tuple[object, ...]
+Hand = tuple[tuple[float, ...], ...]
 
 
 @dataclass(frozen=True, slots=True)
@@ -29,7 +30,7 @@ class Likeness:
     kin: Key
     words: dict[str, str]
     figures: dict[str, float]
-    hand: tuple[float, ...]
+    hand: Hand
 
     def differences(self, other: Likeness) -> list[str]:
         """Return under which words the two differ. Figures that only one of them has follow from a word."""
@@ -141,19 +142,22 @@ def _section(member: JointMember | None) -> Key:
     return (section.shape, round(section.h_mm), round(section.b_mm))
 
 
-def _hand(joint: Joint) -> tuple[float, ...]:
+def _hand(joint: Joint) -> Hand:
     """Return where things lie across the web: the bolts of each row, and the end plate's two edges."""
-    across = [x for row in joint.rows for x in row.x_mm]
     plate = next((shape for shape in joint.front if shape.role == "end_plate"), None)
     edges = [x for x, _ in plate.rings[0]] if plate is not None and plate.rings else [0.0]
-    return (*across, min(edges), max(edges))
+    return (*(tuple(sorted(row.x_mm)) for row in joint.rows), (min(edges), max(edges)))
 
 
-def _is_mirrored(hand: tuple[float, ...], other: tuple[float, ...]) -> bool:
-    """Whether two joints lie mirrored, and not just as well alike."""
-    if len(hand) != len(other) or all(abs(a - b) < SAME for a, b in zip(hand, other, strict=True)):
+def _is_same(hand: Hand, other: Hand) -> bool:
+    if [len(row) for row in hand] != [len(row) for row in other]:
         return False
-    return all(abs(a + b) < SAME for a, b in zip(sorted(hand), sorted(other, reverse=True), strict=True))
+    return all(abs(a - b) < SAME for one, its in zip(hand, other, strict=True) for a, b in zip(one, its, strict=True))
+
+
+def _is_mirrored(hand: Hand, other: Hand) -> bool:
+    """Whether two joints lie mirrored, row for row, and not just as well alike."""
+    return not _is_same(hand, other) and _is_same(hand, tuple(tuple(-x for x in reversed(row)) for row in other))
 
 
 def _families(told: list[Likeness]) -> list[_Family]:
@@ -171,10 +175,7 @@ def _families(told: list[Likeness]) -> list[_Family]:
 
 
 def _alike(one: Likeness, other: Likeness) -> bool:
-    same = len(one.hand) == len(other.hand) and all(
-        abs(a - b) < SAME for a, b in zip(one.hand, other.hand, strict=True)
-    )
-    return not one.differences(other) and (same or _is_mirrored(one.hand, other.hand))
+    return not one.differences(other) and (_is_same(one.hand, other.hand) or _is_mirrored(one.hand, other.hand))
 
 
 def _outliers(families: list[_Family], joints: list[Joint]) -> Iterator[tuple[int, Finding]]:

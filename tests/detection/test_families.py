@@ -43,6 +43,27 @@ def test_mirrored_joints_share_a_family_and_say_so():
     assert joints[0].id in joints[1].provenance["family"].detail
 
 
+class Staggered(EndPlate):
+    """Rows in turn 15 mm to the left and to the right of the web; `first` is the side of the top row."""
+
+    first = 1.0
+
+    def places(self):
+        sides = [self.first * (-1.0) ** number * 15.0 for number in range(len(self.rows)) for _ in (0, 1)]
+        return [(x + side, z) for (x, z), side in zip(super().places(), sides, strict=True)]
+
+
+def test_mirroring_goes_row_by_row():
+    other = Staggered()
+    other.first = -1.0
+    joints = several([Staggered(), other])
+    assert {joint.family for joint in joints} == {"F01"}
+    assert ["family" in joint.provenance for joint in joints] == [False, True]
+    swapped = Staggered()
+    swapped.places = lambda: [*EndPlate.places(swapped)[:2], *Staggered.places(swapped)[2:]]
+    assert len({joint.family for joint in several([Staggered(), swapped])}) == 2
+
+
 def test_shifted_but_not_mirrored_is_another_family():
     moved = OneSided()
     moved.shift = 10.0
