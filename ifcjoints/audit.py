@@ -61,6 +61,7 @@ def audit(
         model=contents.model,
         basis=_record(basis, Path(actions) if actions is not None else None),
         problems=(*contents.problems, *found.problems, *(Problem(element=None, message=note) for note in notes)),
+        properties_used=contents.properties_used,
         settings=_in_force(settings, {name: each.model_dump(mode="json") for name, each in options.items()}),
         installed_checks=tuple(_info(each) for each in checks),
         joints=joints,

@@ -16,7 +16,7 @@ from __future__ import annotations
 
 import sys
 from pathlib import Path
-from typing import Any
+from typing import Any, Literal
 
 from pydantic import Field, ValidationError
 
@@ -65,25 +65,66 @@ class DetectionSettings(Frozen):
     )
 
 
-class ReadingSettings(Frozen):
-    """Where exporting programs put what the open schema has no place for: "Set.Property", or "*.Property"."""
+Meaning = Literal[
+    "bolt_diameter", "bolt_length", "bolt_grade", "steel_grade", "designation", "mark",
+    "weld_type", "weld_throat", "weld_leg",
+]  # fmt: skip
 
-    bolt_grade_properties: tuple[str, ...] = (
-        "*.StrengthGrade",
-        "*.BoltGrade",
-        "*.Bolt grade",
-        "*.BoltStandard",
-        "*.Bolt standard",
-        "*.Grade",
-        "*.Strength class",
-    )
-    steel_grade_properties: tuple[str, ...] = (
-        "*.StructuralGrade",
-        "*.Grade",
-        "*.Material grade",
-        "*.Material",
-    )
-    designation_properties: tuple[str, ...] = ("*.Profile", "*.Section", "*.ProfileName", "*.Reference")
+
+class PropertyRow(Frozen):
+    """One row of the table that says what an exporting program's property means.
+
+    `property` is "Set.Property", or "*.Property" for that property in any set. `unit` is the unit that a bare
+    number in it is meant in: the model's own, or always mm or inches.
+    """
+
+    meaning: Meaning
+    property: str = Field(pattern=r"^[^.]+\..+$")
+    unit: Literal["model", "mm", "in"] = "model"
+
+
+BUILT_IN_ROWS = tuple(
+    PropertyRow(meaning=meaning, property=name)
+    for meaning, names in {
+        "bolt_diameter": ("AISC_EM11_Pset_Bolt.BoltDiameter", "*.NominalDiameter", "*.BoltDiameter"),
+        "bolt_length": ("AISC_EM11_Pset_Bolt.BoltLength", "*.NominalLength", "*.BoltLength"),
+        "bolt_grade": (
+            "AISC_EM11_Pset_Bolt.BoltGrade", "AISC_EM11_Pset_Bolt.BoltType", "AISC_EM11_Pset_Bolt.BoltStandard",
+            "*.StrengthGrade", "*.BoltGrade", "*.Bolt grade", "*.BoltStandard", "*.Bolt standard", "*.Grade",
+            "*.Strength class",
+        ),
+        "steel_grade": (
+            "AISC_EM11_Pset_Material.MaterialGrade", "*.StructuralGrade", "*.MaterialGrade", "*.Grade",
+            "*.Material grade", "*.Material",
+        ),
+        "designation": ("*.Profile", "*.Section", "*.ProfileName", "*.Reference"),
+        "mark": (
+            "AISC_EM11_Pset_PieceIdentification.PieceMark", "AISC_EM11_Pset_AssemblyIdentification.AssemblyMark",
+            "*.Reference", "*.Mark", "*.Piece mark", "*.Part mark", "*.Assembly mark",
+        ),
+        "weld_type": ("Pset_FastenerWeld.Type1", "AISC_EM11_Pset_Weld.Type1", "*.Weld type"),
+        "weld_throat": ("Pset_FastenerWeld.NominalThroatThickness", "Pset_FastenerWeld.a", "AISC_EM11_Pset_Weld.a"),
+        "weld_leg": ("Pset_FastenerWeld.z", "AISC_EM11_Pset_Weld.z", "*.Leg", "*.Leg length"),
+    }.items()
+    for name in names
+)  # fmt: skip
+"""Rows for property sets of the open schema, of the IFC4 steel fabrication exchange (AISC EM.11), and common names."""
+
+
+class ReadingSettings(Frozen):
+    """What properties mean. Rows of one's own come before the built-in ones.
+
+    [[reading.properties]]
+    meaning = "bolt_grade"
+    property = "Fabricator data.Strength"
+    """
+
+    properties: tuple[PropertyRow, ...] = ()
+    built_in_properties: tuple[PropertyRow, ...] = BUILT_IN_ROWS
+
+    def rows(self, meaning: Meaning) -> tuple[PropertyRow, ...]:
+        """Return the rows for a meaning, in the order they are tried."""
+        return tuple(row for row in (*self.properties, *self.built_in_properties) if row.meaning == meaning)
 
 
 class Settings(Frozen):

@@ -99,8 +99,8 @@ class LinearGroup:
         return cls(active, S_1, S_2)
 
     def bears(self, M_c: Quantity, N: Quantity) -> bool:
-        """Whether the compression flange still bears: Σ F ≥ N."""
-        return float(M_c) * float(self.S_1) >= float(N) * float(self.S_2) * (1 - 1e-12)
+        """Whether the compression flange still bears: always without axial tension, else while Σ F ≥ N."""
+        return float(N) <= 0 or float(M_c) * float(self.S_1) >= float(N) * float(self.S_2) * (1 - 1e-12)
 
     def row_force(self, row: BoltRow, M_c: Quantity) -> Quantity:
         """F_r = n_r M_c y_r / Σ n y²."""

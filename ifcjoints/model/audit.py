@@ -77,7 +77,10 @@ class CheckInfo(Frozen):
 
 
 class Audit(Frozen):
-    """Everything that one run found."""
+    """Everything that one run found.
+
+    `properties_used` counts how often each property of the model, as "Set.Property", gave what was read.
+    """
 
     format: Literal["ifcjoints-audit"] = "ifcjoints-audit"
     format_version: Literal[1] = 1
@@ -85,6 +88,7 @@ class Audit(Frozen):
     model: ModelFile
     basis: BasisRecord
     problems: tuple[Problem, ...] = ()
+    properties_used: dict[str, int] = {}
     settings: dict[str, Any]
     installed_checks: tuple[CheckInfo, ...] = ()
     joints: tuple[Joint, ...] = ()

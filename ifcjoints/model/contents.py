@@ -11,7 +11,10 @@ from .parts import Bolt, MemberName, Part, WeldPart
 
 @dataclass(frozen=True, slots=True, eq=False)
 class Contents:
-    """Everything that was read from one model: the parts near bolts, out of `bodies` in all."""
+    """Everything that was read from one model: the parts near bolts, out of `bodies` in all.
+
+    `properties_used` counts how often each property, as "Set.Property", gave what was read.
+    """
 
     model: ModelFile
     parts: tuple[Part, ...]
@@ -20,3 +23,4 @@ class Contents:
     welds: tuple[WeldPart, ...]
     names: tuple[MemberName, ...]
     problems: tuple[Problem, ...]
+    properties_used: dict[str, int]

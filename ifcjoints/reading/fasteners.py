@@ -10,11 +10,12 @@ import ifcopenshell.util.element as element_util
 from ..model.joints import Provenance
 from ..model.parts import Bolt, BoltKind
 from ..model.units import Array, Mm
+from ..settings import Meaning
 from ..tables.bolts import bolt_grade
 from .axial import BoltBody, bolts_of, turned_bodies
 from .bodies import BodyReader
 from .bolt_lines import bolts_from_lines
-from .properties import property_texts
+from .properties import PropertyTable
 from .unreadable import Unreadable
 
 KIND_WORDS: tuple[tuple[BoltKind, str], ...] = (
@@ -39,12 +40,12 @@ Texts = list[tuple[str, str]]
 
 
 class FastenerReader:
-    """Reads fastener elements. `grade_properties` are the property names that may hold a bolt's grade."""
+    """Reads fastener elements."""
 
-    def __init__(self, bodies: BodyReader, length_unit: float, grade_properties: tuple[str, ...]) -> None:
+    def __init__(self, bodies: BodyReader, length_unit: float, properties: PropertyTable) -> None:
         self._bodies = bodies
         self._length = length_unit
-        self._grade_properties = grade_properties
+        self._properties = properties
         self.conflicts: list[tuple[str, str]] = []
         self._shapes: dict[tuple[tuple[int, bytes], ...], list[BoltBody]] = {}
 
@@ -140,19 +141,22 @@ class FastenerReader:
         return body.length, Provenance(source="measured", detail="from the bolt's shank")
 
     def _nominal(self, element: Any, owner: Any, name: str) -> tuple[Mm, str] | None:
-        """Return a stated size in mm, from the element, its type, or its name."""
+        """Return a stated size in mm, from the element, its type, a property, or its name."""
         for each in (element, owner):
             value = getattr(each, name, None) if each is not None else None
             if value:
                 return float(value) * self._length, f"{each.is_a()}.{name}"
-        return size_in_name(element, name)
+        meaning: Meaning = "bolt_diameter" if name == "NominalDiameter" else "bolt_length"
+        return self._properties.length(element, meaning) or size_in_name(element, name)
 
     def _grade(self, element: Any, texts: Texts) -> tuple[str | None, Provenance | None]:
         """Return the designation of the first text that names a grade this program knows."""
         materials = [(material.Name, "material") for material in element_util.get_materials(element) if material.Name]
-        for text, origin in (*property_texts(element, self._grade_properties), *texts, *materials):
+        stated = [(str(each.value), each.origin) for each in self._properties.stated(element, "bolt_grade")]
+        for text, origin in (*stated, *texts, *materials):
             found = bolt_grade(text)
             if found is not None:
+                self._properties.used.update([origin] if (text, origin) in stated else [])
                 return found.name, Provenance(source="read", detail=f'{origin} "{text.strip()}"')
         return None, None
 

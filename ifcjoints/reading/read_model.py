@@ -30,7 +30,7 @@ from .members import as_built_up, as_member
 from .open_model import originating_system, sha256
 from .placements import Placements
 from .plates import as_plate
-from .properties import property_texts
+from .properties import PropertyTable
 from .units import read_units
 from .unreadable import Unreadable
 from .welds import is_weld, read_weld
@@ -40,7 +40,6 @@ NOT_STEELWORK = (
     "IfcTransportElement", "IfcVirtualElement", "IfcReinforcingElement", "IfcWall", "IfcDoor", "IfcWindow",
     "IfcCovering", "IfcCurtainWall", "IfcFooting", "IfcPile",
 )  # fmt: skip
-MARK_PROPERTIES = ("*.Reference", "*.Mark", "*.Piece mark", "*.Part mark", "*.Assembly mark")
 
 NEAR: Mm = 1000.0
 """A part whose box lies farther than this from every bolt belongs to no joint: end plates are smaller."""
@@ -65,10 +64,10 @@ class _Reading:
 
     def __init__(self, file: Any, settings: ReadingSettings) -> None:
         self.file = file
-        self.settings = settings
         self.units = read_units(file)
         self.bodies = BodyReader(self.units, Placements(self.units.length))
-        self.fasteners = FastenerReader(self.bodies, self.units.length, settings.bolt_grade_properties)
+        self.properties = PropertyTable(settings, self.units.length)
+        self.fasteners = FastenerReader(self.bodies, self.units.length, self.properties)
         self.problems: list[Problem] = []
         self.shapes: dict[Piece, tuple[Prism | None, MemberShape | None]] = {}
         self.built_up: dict[tuple[Piece, ...], MemberShape | None] = {}
@@ -82,7 +81,7 @@ class _Reading:
             if element.is_a("IfcMechanicalFastener"):
                 bolts += self._guarded(element, self.fasteners.read) or []
             elif is_weld(element):
-                weld = self._guarded(element, lambda each: read_weld(each, self.bodies, self.units.length))
+                weld = self._guarded(element, lambda each: read_weld(each, self.bodies, self.properties))
                 welds += [weld] if weld else []
         progress("bolts read", 0.2)
         elements = [each for each in self._sorted("IfcElement") if not any(map(each.is_a, NOT_STEELWORK))]
@@ -101,7 +100,8 @@ class _Reading:
         self.problems += [Problem(element=who, message=what) for who, what in self.fasteners.conflicts]
         problems = tuple(self.problems)
         model = self._model_file(path)
-        return Contents(model, tuple(parts), len(bodies), tuple(bolts), tuple(welds), names, problems)
+        used = dict(sorted(self.properties.used.items()))
+        return Contents(model, tuple(parts), len(bodies), tuple(bolts), tuple(welds), names, problems, used)
 
     def _sorted(self, *classes: str) -> list[Any]:
         """Return elements in the file's order, each once."""
@@ -133,8 +133,8 @@ class _Reading:
         for fault in body_faults(pieces):
             self._problem(element, fault)
         plate, member = self._shape(pieces)
-        grade, origin = read_grade(element, self.settings.steel_grade_properties)
-        designation = read_designation(element, pieces, self.settings.designation_properties) if member else None
+        grade, origin = read_grade(element, self.properties)
+        designation = read_designation(element, pieces, self.properties) if member else None
         drilled, notches = self._holes(element)
         # A plate whose shell is open is known by what is left of it, and stands closed from here on.
         mended = plate if plate is not None and len(pieces) == 1 and pieces[0].piece.solid.is_open else None
@@ -206,7 +206,7 @@ class _Reading:
 
     def _names(self, element: Any) -> MemberName:
         texts = [element.Name, getattr(element, "Tag", None)]
-        texts += [text for text, _ in property_texts(element, MARK_PROPERTIES)]
+        texts += [str(stated.value) for stated in self.properties.stated(element, "mark")]
         return MemberName(element.GlobalId, tuple(dict.fromkeys(text for text in texts if text)))
 
     def _model_file(self, path: Path | None) -> ModelFile:

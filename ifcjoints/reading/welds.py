@@ -4,11 +4,11 @@ from __future__ import annotations
 
 from typing import Any
 
-import ifcopenshell.util.element as element_util
 import numpy as np
 
 from ..model.parts import WeldPart
 from .bodies import BodyReader
+from .properties import PropertyTable
 
 SQRT_HALF = 0.5**0.5
 
@@ -19,19 +19,18 @@ def is_weld(element: Any) -> bool:
     return any("weld" in text.lower() for text in texts if text)
 
 
-def read_weld(element: Any, bodies: BodyReader, length_unit: float) -> WeldPart | None:
+def read_weld(element: Any, bodies: BodyReader, properties: PropertyTable) -> WeldPart | None:
     """Return a weld with a body; None without one. The throat is read, or leg / √2 of an equal-leg fillet."""
     pieces = bodies.pieces(element)
     if not pieces:
         return None
     points = np.vstack([piece.in_world().vertices for piece in pieces])
-    properties = element_util.get_psets(element, psets_only=True).get("Pset_FastenerWeld", {})
-    throat, leg = properties.get("NominalThroatThickness") or properties.get("a"), properties.get("Leg")
-    size = float(throat) if throat else float(leg) * SQRT_HALF if leg else None
+    throat, leg = properties.length(element, "weld_throat"), properties.length(element, "weld_leg")
+    size = throat[0] if throat else leg[0] * SQRT_HALF if leg else None
     return WeldPart(
         element.GlobalId,
         points.min(axis=0),
         points.max(axis=0),
-        str(properties.get("Type") or properties.get("Type1") or element.ObjectType or "weld"),
-        size * length_unit if size else None,
+        properties.text(element, "weld_type") or element.ObjectType or "weld",
+        size,
     )

@@ -4,7 +4,7 @@ import numpy as np
 import pytest
 
 from ifcjoints import Settings, audit
-from ifcjoints.settings import ReadingSettings
+from ifcjoints.settings import PropertyRow, ReadingSettings
 
 from .making import Model, at, box, circle
 from .scenes import EndPlate, joints_of
@@ -41,7 +41,8 @@ def test_a_grade_in_a_property_set_of_any_exporter():
         bolt.Name = "bolt"
         model.properties(bolt, "Fabricator data", Festigkeit="10.9")
     assert joints_of(model)[0].bolts.grade is None
-    taught = Settings(reading=ReadingSettings(bolt_grade_properties=("Fabricator data.Festigkeit",)))
+    row = PropertyRow(meaning="bolt_grade", property="Fabricator data.Festigkeit")
+    taught = Settings(reading=ReadingSettings(properties=(row,)))
     (joint,) = joints_of(model, taught)
     assert joint.bolts.grade == "10.9"
     assert "Fabricator data.Festigkeit" in joint.provenance["bolts.grade"].detail
