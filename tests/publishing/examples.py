@@ -151,6 +151,7 @@ def audit(*joints: Joint, **fields: Any) -> Audit:
             actions=FileReference(path=f"{HOSTILE}.csv", sha256="cd" * 32),
         ),
         "problems": (Problem(element="#12", message=f"A body that is not closed {HOSTILE}."),),
+        "properties_used": {f"Set.{HOSTILE}": 7},
         "settings": {"basis": {"gamma_M2": 1.25}, "defaults": {"bolt_grade": HOSTILE}},
         "installed_checks": (
             CheckInfo(name="bolt_group.elastic", title="Elastic bolt group", package="ifcjoints_bolt_groups",

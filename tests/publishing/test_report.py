@@ -87,6 +87,7 @@ def test_every_figure_of_a_joint_is_shown(reader: Reader) -> None:
         "ASSUMED", "edge-distance", "29.98, limit 30.00", "grade not known", "below the bottom flange",
         "0.9·1000·353 / 1.25 = 254.16 kN", "EN 1993-1-8:2005, Table 3.4", "fillet, throat 7.0 mm", "85 %",
         "A fin plate meets the web only.", "Anchors in concrete", "A body that is not closed", "basis.gamma_M2 1.25",
+        f"Set.{examples.HOSTILE} 7",
     ):  # fmt: skip
         assert expected in reader.text
 
