@@ -87,9 +87,12 @@ def against_limit(finding: Finding) -> str:
 
 
 def flattened(settings: Mapping[str, Any], within: str = "") -> Iterator[tuple[str, str]]:
-    """Yield every setting by its full name."""
+    """Yield every setting by its full name; of a table among the settings, each row by its number."""
     for name, value in settings.items():
         if isinstance(value, Mapping) and value:
             yield from flattened(value, f"{within}{name}.")
+        elif isinstance(value, list | tuple) and any(isinstance(each, Mapping) for each in value):
+            for number, row in enumerate(value, 1):
+                yield f"{within}{name}, row {number}", "; ".join(f"{key} {each}" for key, each in row.items())
         else:
             yield f"{within}{name}", "not set" if value is None else str(value)

@@ -8,7 +8,7 @@ import pytest
 
 from ifcjoints.model.findings import Finding
 from ifcjoints.publishing import words
-from ifcjoints.publishing.report import render_report, symbols, write_report
+from ifcjoints.publishing.report import flattened, render_report, symbols, write_report
 
 from . import examples
 
@@ -127,6 +127,17 @@ def test_many_cases_are_all_shown() -> None:
     for number in range(100, 117):
         assert text.count(f"LC{number}") == 3
         assert f"{number}.0" in text
+
+
+def test_every_setting_is_shown_by_its_name() -> None:
+    settings = {"basis": {"standard": None, "gamma_M2": 1.25}, "checks": {}, "table": [{"a": 1, "b": "x"}, {"a": 2}]}
+    assert dict(flattened(settings)) == {
+        "basis.standard": "not set",
+        "basis.gamma_M2": "1.25",
+        "checks": "{}",
+        "table, row 1": "a 1; b x",
+        "table, row 2": "a 2",
+    }
 
 
 def test_findings_of_simple_joints_are_shown() -> None:
