@@ -8,6 +8,7 @@ def test_case(case):
 from __future__ import annotations
 
 from collections.abc import Sequence
+from dataclasses import replace
 from typing import Literal
 
 from ..model.actions import Action, FlangeSide, Forces
@@ -15,7 +16,7 @@ from ..model.basis import EDITIONS, Basis, StandardName
 from ..model.joints import Flange, Interface, Joint, JointBolts, JointMember, JointPlate, Provenance, Row, Section
 from ..model.results import Result
 from ..model.units import Mm
-from .contract import Case, Check, Subject
+from .contract import Case, Check, NoOptions, Subject
 from .runner import run_check
 
 PLAIN_ROWS: tuple[tuple[Mm, int], ...] = ((450.0, 2), (340.0, 2), (60.0, 2))
@@ -115,8 +116,12 @@ def example_cases() -> tuple[Case, ...]:
 
 
 def run_case(check: Check, case: Case) -> Result:
-    """Run one case of a check; AssertionError says how it did not end as it should."""
-    result = run_check(check, case.subject)
+    """Run one case of a check, with the check's default options where the case gives none.
+
+    AssertionError says how it did not end as it should.
+    """
+    plain = isinstance(case.subject.options, NoOptions)
+    result = run_check(check, replace(case.subject, options=check.options()) if plain else case.subject)
     if result.status != case.expect:
         raise AssertionError(
             f'{check.name}, "{case.title}": ended as {result.status}, not {case.expect} ({result.reason})'

@@ -1,0 +1,1 @@
+"""An example of a check pack: one check, one file."""
