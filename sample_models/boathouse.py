@@ -30,6 +30,7 @@ PLATE = EndPlateDesign(
 def build() -> tuple[Steelwork, ModelTruth]:
     """Return the model and what it holds."""
     steel = Steelwork("Heron Yard boathouse", schema="IFC2X3", unit=INCH)
+    steel.file.by_type("IfcConversionBasedUnit")[0].Name = "INCH"
     column = _member(steel, "IfcColumn", "K1", "W12X53", COLUMN, at(0, 0, 0, UP, ACROSS), 168.0 * INCH)
     truth = []
     for name, out in (("L1", ALONG), ("L2", -ALONG)):

@@ -39,6 +39,7 @@ class Steelwork(Model):
 
     def __init__(self, name: str, schema: str = "IFC4", unit: float = 1.0, world: np.ndarray | None = None) -> None:
         super().__init__(schema, unit, world)
+        self.project.Name = "Heron Yard"
         site = self.rooted("IfcSite", Name="Heron Yard", CompositionType="ELEMENT")
         building = self.rooted("IfcBuilding", Name=name, CompositionType="ELEMENT")
         storey = self.rooted("IfcBuildingStorey", Name="Ground", CompositionType="ELEMENT")
