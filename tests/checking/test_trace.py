@@ -1,0 +1,92 @@
+"""The trace: what is shown and what is worked out are one."""
+
+import math
+import re
+
+import pytest
+from hypothesis import assume, given
+from hypothesis import strategies as st
+
+from ifcjoints.checking import Quantity, Trace, greatest, least, root
+from ifcjoints.checking.trace import figure
+
+numbers = st.floats(0.5, 900.0).map(lambda value: round(value, 1))
+
+
+def evaluated(figures: str) -> float:
+    """Evaluate what a person would read."""
+    text = figures.replace("·", "*").replace("−", "-").replace("²", "**2").replace("³", "**3").replace("√", "math.sqrt")
+    return eval(re.sub(r";", ",", text), {"math": math, "min": min, "max": max})
+
+
+@st.composite
+def formulas(draw, depth=4):
+    """Draw a formula as a traced quantity and as a plain float."""
+    if depth == 0 or draw(st.booleans()):
+        value = draw(numbers)
+        return Quantity(value, "x", figure(value)), value
+    (a, x), (b, y) = draw(formulas(depth - 1)), draw(formulas(depth - 1))
+    kind = draw(st.sampled_from("+-*/^~<>r"))
+    if kind == "+":
+        return a + b, x + y
+    if kind == "-":
+        return a - b, x - y
+    if kind == "*":
+        return a * b, x * y
+    if kind == "/":
+        assume(abs(y) > 1e-6)
+        return a / b, x / y
+    if kind == "^":
+        return a**2, x**2
+    if kind == "~":
+        return -a, -x
+    if kind == "r":
+        assume(x > 0)
+        return root(a), math.sqrt(x)
+    return (least(a, b), min(x, y)) if kind == "<" else (greatest(a, b), max(x, y))
+
+
+@given(formulas())
+def test_the_figures_shown_give_the_value_told(pair):
+    traced, plain = pair
+    assert float(traced) == pytest.approx(plain, rel=1e-12, abs=1e-12)
+    assert evaluated(traced.figures) == pytest.approx(plain, rel=1e-9, abs=1e-9)
+
+
+@given(st.lists(numbers, min_size=2, max_size=2))
+def test_a_clause_function_gives_the_same_with_floats_and_with_quantities(pair):
+    def clause(a, b):
+        return 0.9 * a / (b + 1.25) - least(a, b) ** 2
+
+    a, b = (Quantity(value, name, figure(value)) for value, name in zip(pair, "ab", strict=True))
+    assert float(clause(a, b)) == clause(*pair)
+
+
+def test_symbols_are_bracketed_only_where_they_must_be():
+    a, b, c = (Quantity(value, name, figure(value)) for value, name in ((2.0, "a"), (3.0, "b"), (4.0, "c")))
+    assert (a * (b + c)).symbols == "a·(b + c)"
+    assert (a - (b - c)).symbols == "a − (b − c)"
+    assert (a / (b * c)).symbols == "a / (b·c)"
+    assert (a * b + c).symbols == "a·b + c"
+    assert ((a + b) ** 2).symbols == "(a + b)²"
+
+
+def test_steps_are_told_in_the_unit_shown():
+    trace = Trace()
+    force = trace.given("F", 12_500.0, "kN", "given")
+    moment = trace.step("M", force * trace.given("z", 400.0, "mm", "measured"), "kNm", "statics")
+    assert [(step.symbol, step.value, step.unit) for step in trace.steps] == [
+        ("F", 12.5, "kN"),
+        ("z", 400.0, "mm"),
+        ("M", 5.0, "kNm"),
+    ]
+    assert float(moment) == 5e6
+    assert trace.steps[2].expression == "F·z"
+
+
+@pytest.mark.parametrize(
+    ("value", "text"),
+    [(0.0, "0"), (0.9, "0.9"), (353.04, "353"), (1.25, "1.25"), (203_042.4, "203042"), (0.01234, "0.01234")],
+)
+def test_numbers_are_written_as_a_person_would(value, text):
+    assert figure(value) == text
