@@ -7,7 +7,7 @@ from hypothesis import strategies as st
 
 from ifcjoints import Settings, audit
 from ifcjoints.settings import Defaults
-from tests.patterns.making import Model, turned
+from sample_models.making import Model, turned
 from tests.patterns.scenes import EndPlate
 
 STEEL = Settings(defaults=Defaults(steel_grade="S355"))

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import pytest
 
-from tests.patterns.making import Model, turned
+from sample_models.making import Model, turned
 from tests.patterns.scenes import EndPlate, joints_of
 
 

@@ -6,7 +6,7 @@ import pytest
 from hypothesis import HealthCheck, assume, given, settings
 from hypothesis import strategies as st
 
-from tests.patterns.making import FOOT, INCH, Model, turned
+from sample_models.making import FOOT, INCH, Model, turned
 from tests.patterns.scenes import HEB300, IPE400, EndPlate, joints_of, rows_of
 from tests.patterns.test_haunches_and_stiffeners import Haunched
 

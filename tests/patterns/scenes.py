@@ -13,8 +13,7 @@ from ifcjoints.detection.find_joints import find_joints
 from ifcjoints.model.joints import Joint
 from ifcjoints.reading.read_model import read_model
 from ifcjoints.settings import Settings
-
-from .making import Model, at, box, circle, i_ring
+from sample_models.making import Model, at, box, circle, i_ring
 
 IPE400 = (400.0, 180.0, 8.6, 13.5, 21.0)
 HEB300 = (300.0, 300.0, 11.0, 19.0, 27.0)

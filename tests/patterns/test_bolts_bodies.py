@@ -5,7 +5,8 @@ import math
 import numpy as np
 import pytest
 
-from .making import Model, at, circle, prism_faces
+from sample_models.making import Model, at, circle, prism_faces
+
 from .scenes import EndPlate, joints_of, rows_of
 
 D, LENGTH = 24.0, 80.0

@@ -5,8 +5,8 @@ from __future__ import annotations
 import pytest
 
 from ifcjoints.tables.sections import section_size
+from sample_models.making import Model
 
-from .making import Model
 from .scenes import HEB300, EndPlate, joints_of, rows_of
 
 

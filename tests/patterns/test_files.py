@@ -12,8 +12,8 @@ from ifcjoints.detection.find_joints import find_joints
 from ifcjoints.reading.open_model import open_model
 from ifcjoints.reading.read_model import read_model
 from ifcjoints.settings import Settings
+from sample_models.making import Model, at, box, circle, i_ring, prism_faces
 
-from .making import Model, at, box, circle, i_ring, prism_faces
 from .scenes import EndPlate, joints_of, rows_of
 
 

@@ -5,8 +5,8 @@ import pytest
 
 from ifcjoints import Settings, audit
 from ifcjoints.settings import PropertyRow, ReadingSettings
+from sample_models.making import Model, at, box, circle
 
-from .making import Model, at, box, circle
 from .scenes import EndPlate, joints_of
 
 

@@ -7,7 +7,8 @@ import math
 import numpy as np
 import pytest
 
-from .making import Model, at, box
+from sample_models.making import Model, at, box
+
 from .scenes import ACROSS, EndPlate, joints_of, rows_of
 
 DROP, REACH = 360.0, 1800.0

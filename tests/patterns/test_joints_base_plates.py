@@ -8,8 +8,8 @@ import pytest
 from ifcjoints.detection.find_joints import find_joints
 from ifcjoints.reading.read_model import read_model
 from ifcjoints.settings import Settings
+from sample_models.making import Model, at, box
 
-from .making import Model, at, box
 from .scenes import HEB300, IPE400, joints_of
 
 

@@ -5,7 +5,8 @@ from __future__ import annotations
 import numpy as np
 import pytest
 
-from .making import Model, at, box, turned
+from sample_models.making import Model, at, box, turned
+
 from .scenes import IPE400, joints_of
 
 

@@ -5,7 +5,8 @@ from __future__ import annotations
 import numpy as np
 import pytest
 
-from .making import Model, at, box, turned
+from sample_models.making import Model, at, box, turned
+
 from .scenes import HEB300, EndPlate, joints_of, rows_of
 
 IPE300 = (300.0, 150.0, 7.1, 10.7, 15.0)

@@ -7,7 +7,8 @@ import math
 import numpy as np
 import pytest
 
-from .making import Model, at, box, i_ring
+from sample_models.making import Model, at, box, i_ring
+
 from .scenes import ACROSS, IPE400, EndPlate, joints_of, rows_of
 
 

@@ -6,7 +6,8 @@ import math
 
 import pytest
 
-from .making import Model, at, box
+from sample_models.making import Model, at, box
+
 from .scenes import EndPlate, joints_of, rows_of
 
 H, B, TW, TF, LENGTH = 600.0, 250.0, 10.0, 20.0, 5000.0

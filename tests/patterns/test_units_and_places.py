@@ -5,7 +5,8 @@ from __future__ import annotations
 import numpy as np
 import pytest
 
-from .making import FOOT, INCH, Model, at, turned
+from sample_models.making import FOOT, INCH, Model, at, turned
+
 from .scenes import EndPlate, joints_of, rows_of
 
 

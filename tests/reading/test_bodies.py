@@ -8,7 +8,7 @@ import pytest
 from ifcjoints.reading.bodies import BodyReader
 from ifcjoints.reading.placements import Placements
 from ifcjoints.reading.units import read_units
-from tests.patterns.making import FOOT, INCH, Model, at, box, circle, i_ring, prism_faces, turned
+from sample_models.making import FOOT, INCH, Model, at, box, circle, i_ring, prism_faces, turned
 from tests.patterns.oracle import kernel_volume_and_box
 
 PLACE = turned(37.0, (1, 2, 3), (1200.0, -300.0, 4500.0))

@@ -9,7 +9,7 @@ from ifcjoints.reading.bodies import BodyReader
 from ifcjoints.reading.members import as_member
 from ifcjoints.reading.placements import Placements
 from ifcjoints.reading.units import read_units
-from tests.patterns.making import INCH, Model, at, box, turned
+from sample_models.making import INCH, Model, at, box, turned
 from tests.patterns.oracle import kernel_volume_and_box
 
 PLACE = turned(37.0, (1, 2, 3), (1200.0, -300.0, 4500.0))

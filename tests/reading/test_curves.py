@@ -11,7 +11,7 @@ from ifcjoints.model.geometry import signed_area
 from ifcjoints.reading.curves import ring, three_point_arc
 from ifcjoints.reading.placements import Placements
 from ifcjoints.reading.unreadable import Unreadable
-from tests.patterns.making import INCH, Model
+from sample_models.making import INCH, Model
 
 CHORDS = 0.012
 """A circle in chords of 15° lacks 1.14 % of its area."""

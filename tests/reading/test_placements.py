@@ -9,7 +9,7 @@ from hypothesis import strategies as st
 from ifcopenshell.util.placement import get_local_placement
 
 from ifcjoints.reading.placements import Placements, is_rigid
-from tests.patterns.making import FOOT, INCH, Model, at, turned
+from sample_models.making import FOOT, INCH, Model, at, turned
 
 vectors = st.tuples(*[st.floats(-1, 1)] * 3).filter(lambda v: np.linalg.norm(v) > 0.1)
 

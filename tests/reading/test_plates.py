@@ -12,7 +12,7 @@ from ifcjoints.model.geometry import Solid
 from ifcjoints.reading.bodies import Piece
 from ifcjoints.reading.members import as_member
 from ifcjoints.reading.plates import as_plate
-from tests.patterns.making import box, circle, i_ring, prism_faces, turned
+from sample_models.making import box, circle, i_ring, prism_faces, turned
 
 OUTLINES = {
     "end plate": [box(200, 540), circle(13, 16, 55, 200), circle(13, 16, -55, 200), circle(13, 12, 55, -200)],

@@ -14,7 +14,7 @@ from hypothesis import strategies as st
 from shapely import affinity
 
 from ifcjoints.reading.section_outlines import measure_outline
-from tests.patterns.making import INCH, box, circle, i_ring
+from sample_models.making import INCH, box, circle, i_ring
 
 I_SECTIONS = {
     "IPE 200": (200, 100, 5.6, 8.5, 12),

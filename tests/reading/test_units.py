@@ -10,7 +10,7 @@ from ifcopenshell.util.unit import calculate_unit_scale
 
 from ifcjoints.errors import ModelError
 from ifcjoints.reading.units import read_units
-from tests.patterns.making import FOOT, INCH, Model
+from sample_models.making import FOOT, INCH, Model
 
 
 @pytest.mark.parametrize("schema", ["IFC2X3", "IFC4", "IFC4X3"])
