@@ -24,7 +24,8 @@ from ..model.results import Step
 SCALE = {"kN": 1e3, "kNm": 1e6}
 """How many of the inner unit (N, Nmm) make one of a shown unit."""
 
-_SUM, _PRODUCT, _ATOM = 1, 2, 3
+_SUM, _QUOTIENT, _PRODUCT, _POWER, _ATOM = 1, 2, 3, 4, 5
+"""How firmly a formula holds together. A quotient is looser than a product, so that a / b is never read into a·b."""
 
 
 def figure(value: float) -> str:
@@ -70,7 +71,7 @@ class Quantity:
         return _quantity(other) + self
 
     def __sub__(self, other: Quantity | float) -> Quantity:
-        return self._join(other, self.value - float(other), " − ", (_SUM, _PRODUCT, _SUM))
+        return self._join(other, self.value - float(other), " − ", (_SUM, _QUOTIENT, _SUM))
 
     def __rsub__(self, other: float) -> Quantity:
         return _quantity(other) - self
@@ -82,7 +83,7 @@ class Quantity:
         return _quantity(other) * self
 
     def __truediv__(self, other: Quantity | float) -> Quantity:
-        return self._join(other, self.value / float(other), " / ", (_PRODUCT, _ATOM, _PRODUCT))
+        return self._join(other, self.value / float(other), " / ", (_PRODUCT, _POWER, _QUOTIENT))
 
     def __rtruediv__(self, other: float) -> Quantity:
         return _quantity(other) / self
@@ -90,10 +91,10 @@ class Quantity:
     def __pow__(self, exponent: float) -> Quantity:
         shown = "²" if exponent == 2 else "³" if exponent == 3 else f"^{exponent:g}"
         base = self._wrapped(_ATOM)
-        return Quantity(self.value**exponent, f"{base[0]}{shown}", f"{base[1]}{shown}", _ATOM)
+        return Quantity(self.value**exponent, f"{base[0]}{shown}", f"{base[1]}{shown}", _POWER)
 
     def __neg__(self) -> Quantity:
-        inner = self._wrapped(_PRODUCT)
+        inner = self._wrapped(_QUOTIENT)
         return Quantity(-self.value, f"−{inner[0]}", f"−{inner[1]}", _SUM)
 
     def __lt__(self, other: Quantity | float) -> bool:

@@ -37,7 +37,8 @@ def formulas(draw, depth=4):
         assume(abs(y) > 1e-6)
         return a / b, x / y
     if kind == "^":
-        return a**2, x**2
+        assume(abs(x) < 1e9)
+        return (a**2, x**2) if draw(st.booleans()) else (a**3, x**3)
     if kind == "~":
         return -a, -x
     if kind == "r":
@@ -69,6 +70,16 @@ def test_symbols_are_bracketed_only_where_they_must_be():
     assert (a / (b * c)).symbols == "a / (b·c)"
     assert (a * b + c).symbols == "a·b + c"
     assert ((a + b) ** 2).symbols == "(a + b)²"
+    assert ((a**2) ** 3).symbols == "(a²)³"
+
+
+def test_a_quotient_within_a_product_cannot_be_misread():
+    """Written a / b·c, a person would take the product for the divisor."""
+    a, b, c = (Quantity(value, name, figure(value)) for value, name in ((2.0, "a"), (3.0, "b"), (4.0, "c")))
+    assert (a / b * c).symbols == "(a / b)·c"
+    assert (a / b / c).symbols == "(a / b) / c"
+    assert (a * b / c).symbols == "a·b / c"
+    assert (a - b / c).symbols == "a − b / c"
 
 
 def test_steps_are_told_in_the_unit_shown():
