@@ -27,4 +27,4 @@ def _points(curve: Any) -> Any | None:
 
 def _bolt(ends: np.ndarray) -> BoltBody:
     along = ends[1] - ends[0]
-    return BoltBody(ends[0], unit(along), float(np.linalg.norm(along)), None, True)
+    return BoltBody(ends[0], unit(along), float(np.linalg.norm(along)), None, None, True)

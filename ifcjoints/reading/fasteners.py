@@ -12,10 +12,11 @@ from ..model.parts import Bolt, BoltKind
 from ..model.units import Array, Mm
 from ..settings import Meaning
 from ..tables.bolts import bolt_grade
-from .axial import BoltBody, bolts_of, turned_bodies
+from .axial import BoltBody, bolts_of
 from .bodies import BodyReader
 from .bolt_lines import bolts_from_lines
 from .properties import PropertyTable
+from .turned import turned_bodies
 from .unreadable import Unreadable
 
 KIND_WORDS: tuple[tuple[BoltKind, str], ...] = (

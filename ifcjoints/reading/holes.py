@@ -8,8 +8,8 @@ import shapely
 from ..model.geometry import Frame, Prism, unit
 from ..model.parts import Hole
 from ..model.units import Array
-from .axial import as_turned
 from .bodies import PlacedPiece
+from .turned import as_turned
 
 
 def holes_in_plate(plate: Prism) -> list[Hole]:

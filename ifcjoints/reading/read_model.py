@@ -92,7 +92,7 @@ class _Reading:
             if number % 200 == 0:
                 progress("bodies read", 0.2 + 0.6 * number / len(elements))
         near = near_bolts([pieces for _, pieces in bodies], bolts)
-        opened = [body for body, is_near in zip(bodies, near, strict=True) if is_near and not is_nut_or_washer(body[1])]
+        opened = [body for body, is_near in zip(bodies, near, strict=True) if is_near and not _is_loose(*body)]
         parts = [part for each in opened if (part := self._guarded(each[0], partial(self._part, pieces=each[1])))]
         parts = join_built_up(parts, self._owners())
         progress("parts read", 1.0)
@@ -217,6 +217,10 @@ class _Reading:
             length_unit_mm=self.units.length,
             originating_system=originating_system(self.file),
         )
+
+
+def _is_loose(element: Any, pieces: list[PlacedPiece]) -> bool:
+    return is_nut_or_washer(pieces, element.Name or "")
 
 
 def near_bolts(bodies: list[list[PlacedPiece]], bolts: list[Bolt]) -> Array:
