@@ -2,7 +2,9 @@
 
 import pytest
 
-from ifcjoints.tables.bolts import bolt_grade, tensile_stress_area
+from ifcjoints.model.basis import EDITIONS
+from ifcjoints.tables.bolts import UNIT_NOISE, _sizes, bolt_grade, bolt_size, tensile_stress_area
+from ifcjoints.tables.rows import rows_of
 from ifcjoints.tables.steels import steel_grade
 
 
@@ -12,13 +14,18 @@ from ifcjoints.tables.steels import steel_grade
         ("8.8", "8.8"), ("M20x60 8.8", "8.8"), ("10.9", "10.9"), ("ISO 4014 M24 x 90-10.9", "10.9"), ("A325N", "A325N"),
         ("A325-X", "A325X"), ("A325SC", "A325SC"), ("A490", "A490"),
         ("D=3/4 L=2 1/4 Site A325N", "A325N"), ("A325M", "A325"),
+        ("F1852 TC", "F1852"), ("F2280M-X", "F2280X"), ("Group 144-N", "Group 144N"), ("A490X", "A490X"),
+        ("M24 10.9HV", "10.9"),
     ],
 )  # fmt: skip
 def test_bolt_grades(text, name):
     assert bolt_grade(text).name == name
 
 
-@pytest.mark.parametrize("text", ["", "18.8", "8.85", "M8x40", "A3250", "BA325", "10.9.1", "length 108.8"])
+@pytest.mark.parametrize(
+    "text",
+    ["", "18.8", "8.85", "M8x40", "A3250", "BA325", "10.9.1", "length 108.8", "12.9", "a 325 mm rod", "Group 130"],
+)
 def test_what_is_no_bolt_grade(text):
     assert bolt_grade(text) is None
 
@@ -53,6 +60,8 @@ def test_yield_strengths_by_thickness(text, thickness, f_y):
         ("A572 Gr. 50", 50),
         ("A500 Grade C", 50),
         ("A572-50", 50),
+        ("A588", 50),
+        ("A913 Grade 65", 65),
     ],
 )
 def test_american_grades(text, ksi):
@@ -60,7 +69,9 @@ def test_american_grades(text, ksi):
     assert steel_grade(text, 12.0).f_y == pytest.approx(ksi * 6.894757, rel=1e-4)
 
 
-@pytest.mark.parametrize("text", ["", "Steel", "S3555", "C30/37", "S350", "XS355", "A360", "A9921"])
+@pytest.mark.parametrize(
+    "text", ["", "Steel", "S3555", "C30/37", "S350", "XS355", "A360", "A9921", "A572-65", "a 36 mm plate"]
+)
 def test_what_is_no_steel_grade(text):
     assert steel_grade(text, 10.0) is None
 
@@ -69,6 +80,38 @@ def test_a_plate_thicker_than_the_table_has_no_strength():
     assert steel_grade("S355", 101.0) is None
 
 
-@pytest.mark.parametrize("diameter", [19.05, 23.0, 7.0])
-def test_off_the_metric_series_there_is_no_stress_area(diameter):
+@pytest.mark.parametrize(
+    ("inches", "area"), [(0.5, 0.142), (0.625, 0.226), (0.75, 0.334), (0.875, 0.462), (1.0, 0.606), (1.125, 0.763),
+                         (1.25, 0.969), (1.375, 1.16), (1.5, 1.41)]
+)  # fmt: skip
+def test_stress_areas_of_inch_bolts(inches, area):
+    """AISC Manual, Table 7-17, tensile stress areas in in² as printed to three digits (from memory)."""
+    assert tensile_stress_area(inches * 25.4) / 25.4**2 == pytest.approx(area, abs=0.006 if area > 1 else 0.00051)
+
+
+@pytest.mark.parametrize(
+    ("diameter", "name"), [(19.05, "3/4 in"), (19.1, "3/4 in"), (15.9, "5/8 in"), (16.0, "M16"), (15.96, "M16"),
+                           (22.225, "7/8 in"),
+                           (22.0, "M22"), (23.9999, "M24")]
+)  # fmt: skip
+def test_a_size_is_told_through_the_noise_of_units(diameter, name):
+    assert bolt_size(diameter).name == name
+
+
+def test_no_diameter_stands_for_two_sizes():
+    for tenth_of_a_hundredth in range(7000, 40000):
+        d = tenth_of_a_hundredth / 1000
+        assert sum(abs(size.d - d) <= UNIT_NOISE for size in _sizes()) <= 1
+
+
+@pytest.mark.parametrize("diameter", [7.0, 19.3, 23.0, 26.0, 40.5])
+def test_off_both_series_there_is_no_size(diameter):
+    assert bolt_size(diameter) is None
     assert tensile_stress_area(diameter) is None
+
+
+def test_every_row_of_the_tables_tells_its_source():
+    for name in ("bolt_grades.csv", "steel_grades.csv"):
+        for row in rows_of(name):
+            assert len(row["source"]) > 5, row
+    assert {row["standard"] for row in rows_of("bolt_grades.csv")} == set(EDITIONS)
