@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
+from dataclasses import replace
 
 import numpy as np
 import shapely
@@ -21,6 +22,9 @@ BUILT_UP = ("I", "U", "T", "hollow_rectangular")
 
 SEAM: Mm = 0.05
 """Plates of a built-up section that are nearer than twice this touch."""
+
+TIE: Mm = 1.0
+"""Two ends this equally far from the origin are told apart by the axis's direction instead."""
 
 SLENDER = 0.5
 """A member is at least this many times as long as the lesser side of its section."""
@@ -75,8 +79,26 @@ def _measured(solids: Sequence[Solid], axis: Array) -> MemberShape | None:
     """Measure a member; a tapered one a second time, square to the axis that the first time found."""
     member = _measured_along(solids, axis)
     if member is not None and member.axis @ axis < 1 - 1e-9:
-        return _measured_along(solids, member.axis)
-    return member
+        member = _measured_along(solids, member.axis)
+    return member and _headed(member)
+
+
+def _headed(member: MemberShape) -> MemberShape:
+    """Let a measured member start at the end nearer to its element's own origin, its depth along its own axes.
+
+    A body without a stated axis would else start at either end, as the last digit of an area decides.
+    """
+    end = member.start + member.axis * member.length
+    nearer = float(np.linalg.norm(member.start) - np.linalg.norm(end))
+    turned = nearer > TIE if abs(nearer) > TIE else not _points_up(member.axis)
+    start, axis = (end, -member.axis) if turned else (member.start, member.axis)
+    depth = member.depth if _points_up(member.depth) else -member.depth
+    return replace(member, start=start, axis=axis, depth=depth)
+
+
+def _points_up(vector: Array) -> bool:
+    """Whether a vector's greatest component is positive."""
+    return bool(vector[int(np.argmax(np.round(np.abs(vector), 6)))] > 0)
 
 
 def _measured_along(solids: Sequence[Solid], axis: Array) -> MemberShape | None:
