@@ -66,7 +66,7 @@ class DetectionSettings(Frozen):
 
 
 Meaning = Literal[
-    "bolt_diameter", "bolt_length", "bolt_grade", "steel_grade", "designation", "mark",
+    "bolt_diameter", "bolt_length", "bolt_grade", "bolt_standard", "steel_grade", "designation", "mark",
     "weld_type", "weld_throat", "weld_leg",
 ]  # fmt: skip
 
@@ -89,9 +89,11 @@ BUILT_IN_ROWS = tuple(
         "bolt_diameter": ("AISC_EM11_Pset_Bolt.BoltDiameter", "*.NominalDiameter", "*.BoltDiameter"),
         "bolt_length": ("AISC_EM11_Pset_Bolt.BoltLength", "*.NominalLength", "*.BoltLength"),
         "bolt_grade": (
-            "AISC_EM11_Pset_Bolt.BoltGrade", "AISC_EM11_Pset_Bolt.BoltType", "AISC_EM11_Pset_Bolt.BoltStandard",
-            "*.StrengthGrade", "*.BoltGrade", "*.Bolt grade", "*.BoltStandard", "*.Bolt standard", "*.Grade",
-            "*.Strength class",
+            "AISC_EM11_Pset_Bolt.BoltGrade", "*.StrengthGrade", "*.BoltGrade", "*.Bolt grade", "*.Strength class",
+        ),
+        "bolt_standard": (
+            "AISC_EM11_Pset_Bolt.BoltType", "AISC_EM11_Pset_Bolt.BoltStandard", "*.BoltStandard", "*.Bolt standard",
+            "*.Grade",
         ),
         "steel_grade": (
             "AISC_EM11_Pset_Material.MaterialGrade", "*.StructuralGrade", "*.MaterialGrade", "*.Grade",
@@ -103,8 +105,13 @@ BUILT_IN_ROWS = tuple(
             "*.Reference", "*.Mark", "*.Piece mark", "*.Part mark", "*.Assembly mark",
         ),
         "weld_type": ("Pset_FastenerWeld.Type1", "AISC_EM11_Pset_Weld.Type1", "*.Weld type"),
-        "weld_throat": ("Pset_FastenerWeld.NominalThroatThickness", "Pset_FastenerWeld.a", "AISC_EM11_Pset_Weld.a"),
-        "weld_leg": ("Pset_FastenerWeld.z", "AISC_EM11_Pset_Weld.z", "*.Leg", "*.Leg length"),
+        "weld_throat": (
+            "Pset_FastenerWeld.NominalThroatThickness", "Pset_FastenerWeld.a", "AISC_EM11_Pset_Weld.a", "*.Throat",
+        ),
+        "weld_leg": (
+            "Pset_FastenerWeld.WeldLegLength", "Pset_FastenerWeld.z", "AISC_EM11_Pset_Weld.z", "*.Leg",
+            "*.Leg length",
+        ),
     }.items()
     for name in names
 )  # fmt: skip
@@ -127,6 +134,14 @@ class ReadingSettings(Frozen):
         return tuple(row for row in (*self.properties, *self.built_in_properties) if row.meaning == meaning)
 
 
+class ActionsSettings(Frozen):
+    """How member ends of an analysis model are matched to joints, in mm and degrees."""
+
+    node_distance_mm: Mm = Field(default=600.0, gt=0, description="farthest an analysis node is from its interface")
+    axis_tolerance_deg: Degrees = Field(default=35.0, gt=0, lt=90, description="member's axis against the normal")
+    alike_mm: Mm = Field(default=1.0, ge=0, description="two members' ends this equally near are not told apart")
+
+
 class Settings(Frozen):
     """All settings of a run."""
 
@@ -134,6 +149,7 @@ class Settings(Frozen):
     defaults: Defaults = Defaults()
     detection: DetectionSettings = DetectionSettings()
     reading: ReadingSettings = ReadingSettings()
+    actions: ActionsSettings = ActionsSettings()
     checks: dict[str, dict[str, Any]] = {}
 
 

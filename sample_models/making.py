@@ -260,10 +260,11 @@ class Model:
         return made
 
     def bolt(
-        self, point: Any, direction: Any, d: float = 24.0, length: float = 80.0, name: str = "M24x80 8.8", **more: Any
+        self, point: Any, direction: Any, d: float = 24.0, length: float = 80.0, name: str | None = None, **more: Any
     ) -> Any:
-        """Create a bolt: shank from under the head at `point` along `direction`, hexagon head and nut."""
+        """Create a bolt of class 8.8: shank from under the head at `point` along `direction`, hexagon head and nut."""
         items = self.bolt_items(d, length)
+        name = name or f"M{d:g}x{length:g} 8.8"
         return self.product("IfcMechanicalFastener", name, at(*point, axis=direction), items, **more)
 
     def bolt_items(self, d: float, length: float, matrix: np.ndarray | None = None) -> list[Any]:

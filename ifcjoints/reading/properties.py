@@ -31,6 +31,7 @@ class PropertyTable:
         self._settings = settings
         self._length = length_unit
         self._sets: tuple[int, dict[str, dict[str, Any]]] = (0, {})
+        self._asked: set[str] = set()
         self.used: Counter[str] = Counter()
 
     def stated(self, element: Any, meaning: Meaning) -> list[Stated]:
@@ -52,15 +53,27 @@ class PropertyTable:
             return str(stated.value)
         return None
 
+    def lengths(self, element: Any, meaning: Meaning) -> list[tuple[Mm, str, bool]]:
+        """Return the positive lengths stated: in mm, where, and whether their unit is sure (not just the model's)."""
+        found = []
+        for stated in self.stated(element, meaning):
+            length = _length(stated.value, stated.row.unit, self._length)
+            if length is not None and length[0] > 0:
+                found.append((length[0], stated.origin, length[1]))
+                self._asked.add(stated.origin)
+        return found
+
     def length(self, element: Any, meaning: Meaning) -> tuple[Mm, str] | None:
         """Return the first positive length stated, in mm, and where; count its property as used."""
-        for stated in self.stated(element, meaning):
-            number = _number(stated.value)
-            if number is not None and number > 0:
-                self.used[stated.origin] += 1
-                unit = {"model": self._length, "mm": 1.0, "in": INCH}[stated.row.unit]
-                return number * unit, stated.origin
+        for value, origin, _ in self.lengths(element, meaning):
+            self.used[origin] += 1
+            return value, origin
         return None
+
+    def count(self, origin: str) -> None:
+        """Count a property as used, if a property it is."""
+        if origin in self._asked:
+            self.used[origin] += 1
 
     def _sets_of(self, element: Any) -> dict[str, dict[str, Any]]:
         """Return an element's property sets; those of the element asked about last are kept."""
@@ -73,9 +86,17 @@ def _first(value: Any) -> Any:
     return value[0] if isinstance(value, tuple | list) else value
 
 
-def _number(value: Any) -> float | None:
-    """Return a number, or one that begins a text ("24", "24 mm"); None for anything else."""
+NUMBER = re.compile(r"\s*(?:(\d+)[ -])?(\d+(?:\.\d+)?)(?:/(\d+))?\s*(mm|cm|m|in|inch|\"|″|)\.?\s*$")
+UNITS: dict[str, Mm] = {"mm": 1.0, "cm": 10.0, "m": 1000.0, "in": INCH, "inch": INCH, '"': INCH, "″": INCH}
+
+
+def _length(value: Any, unit: str, model: Mm) -> tuple[Mm, bool] | None:
+    """Return a number, or a text such as "24 mm" or "2 1/4 in", as mm, and whether its unit is said."""
     if isinstance(value, int | float) and not isinstance(value, bool):
-        return float(value)
-    found = re.match(r"\s*(\d+(?:\.\d+)?)(?![\d/,])", str(value))
-    return float(found.group(1)) if found else None
+        return float(value) * UNITS.get(unit, model), unit in UNITS
+    found = NUMBER.match(str(value))
+    if found is None:
+        return None
+    whole, above, below, written = found.groups()
+    number = float(whole or 0) + float(above) / (float(below or 1) or 1.0)
+    return number * UNITS.get(written or unit, model), bool(written) or unit in UNITS

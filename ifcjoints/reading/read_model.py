@@ -21,6 +21,7 @@ from .axial import is_nut_or_washer
 from .bodies import BodyReader, Piece, PlacedPiece
 from .built_up import join_built_up
 from .designations import read_designation
+from .fastener_kinds import is_named_bolt
 from .fasteners import FastenerReader
 from .faults import body_faults, doubled_ids
 from .holes import hole_from_opening, holes_in_plate
@@ -83,8 +84,15 @@ class _Reading:
             elif is_weld(element):
                 weld = self._guarded(element, lambda each: read_weld(each, self.bodies, self.properties))
                 welds += [weld] if weld else []
+            else:
+                bolts += self._guarded(element, self.fasteners.read_by_shape) or []
         progress("bolts read", 0.2)
         elements = [each for each in self._sorted("IfcElement") if not any(map(each.is_a, NOT_STEELWORK))]
+        misclassed = {
+            each.id(): self._guarded(each, self.fasteners.read_by_shape) for each in filter(is_named_bolt, elements)
+        }
+        bolts += [bolt for found in misclassed.values() for bolt in found or ()]
+        elements = [each for each in elements if not misclassed.get(each.id())]
         bodies: list[tuple[Any, list[PlacedPiece]]] = []
         for number, element in enumerate(elements):
             pieces = self._guarded(element, self._pieces) if element.Representation is not None else None
@@ -97,7 +105,7 @@ class _Reading:
         parts = join_built_up(parts, self._owners())
         progress("parts read", 1.0)
         names = tuple(self._names(each) for each in elements)
-        self.problems += [Problem(element=who, message=what) for who, what in self.fasteners.conflicts]
+        self.problems += [Problem(element=who, message=what) for who, what in self.fasteners.problems()]
         problems = tuple(self.problems)
         model = self._model_file(path)
         used = dict(sorted(self.properties.used.items()))

@@ -182,19 +182,21 @@ def test_nominal_sizes_in_another_unit_than_the_model_s(unit, stated):
     assert joint.provenance["bolts.diameter"].source == "read"
 
 
-def test_a_real_conflict_of_sizes_is_a_problem_that_names_both():
+@pytest.mark.parametrize(("stated", "source"), [(16.0, "read"), (22.0, "read"), (27.0, "measured")])
+def test_a_real_conflict_of_sizes_is_a_problem_that_names_both_and_the_smaller_is_used(stated, source):
     from ifcjoints import audit  # noqa: PLC0415
 
     model = Model()
     for place in plain_bolts(model):
         items = model.bolt_items(D, LENGTH)
-        model.product("IfcMechanicalFastener", "8.8", place, items, NominalDiameter=16.0, NominalLength=LENGTH)
+        model.product("IfcMechanicalFastener", "8.8", place, items, NominalDiameter=stated, NominalLength=LENGTH)
     result = audit(model.file)
-    assert len(result.problems) == 2 * len(DESIGN.rows)
-    assert "16.0 mm" in result.problems[0].message
-    assert "24.0 mm" in result.problems[0].message
-    assert result.joints[0].bolts.diameter_mm == pytest.approx(D)
-    assert result.joints[0].provenance["bolts.diameter"].source == "measured"
+    problems = [problem for problem in result.problems if "diameter" in problem.message]
+    assert len(problems) == 2 * len(DESIGN.rows)
+    assert f"{stated:.1f} mm" in problems[0].message
+    assert "24.0 mm" in problems[0].message
+    assert result.joints[0].bolts.diameter_mm == pytest.approx(min(D, stated))
+    assert result.joints[0].provenance["bolts.diameter"].source == source
 
 
 @pytest.mark.parametrize(
