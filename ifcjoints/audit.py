@@ -7,13 +7,16 @@ from importlib.metadata import version
 from pathlib import Path
 from typing import Any
 
-from .actions.matching import match_actions
+from .actions.analysis import read_analysis
+from .actions.analysis_matching import match_analysis
+from .actions.matching import MatchedActions, match_actions
 from .actions.table import read_actions
 from .checking.registry import InstalledCheck, installed_checks
 from .checking.runner import resolve_options, run_checks
 from .detection.find_joints import find_joints
 from .model.audit import Audit, BasisRecord, CheckInfo, FileReference, Generator
 from .model.basis import Basis, StandardName
+from .model.contents import Contents
 from .model.findings import Problem
 from .model.joints import Joint
 from .reading.open_model import checked, open_model, sha256
@@ -35,7 +38,8 @@ def audit(
 ) -> Audit:
     """Audit the bolted joints of a model.
 
-    `model` is a path or an open ``ifcopenshell.file``; `actions` a CSV table of design actions;
+    `model` is a path or an open ``ifcopenshell.file``; `actions` a CSV table of design actions, or an IFC file
+    that holds a structural analysis model with results;
     `packs` and `only` (a glob) limit which checks run; `progress` is told what was done and the
     share of the work (0 to 1). The model is only read. Raises the errors of :mod:`ifcjoints.errors`.
     """
@@ -45,11 +49,10 @@ def audit(
     options = resolve_options(checks, settings.checks)
     path = Path(model) if isinstance(model, str | Path) else None
     file = open_model(path) if path else checked(model, "the model")
-    table = read_actions(Path(actions)) if actions is not None else []
     contents = read_model(file, settings.reading, path, lambda text, share: tell(text, 0.6 * share))
     found = find_joints(contents, settings)
     tell("joints found", 0.8)
-    acting, notes = match_actions(table, contents.names, found.joints)
+    acting, notes = _acting(actions, contents, found.joints, settings)
     basis = _basis(settings, found.joints)
     joints = tuple(
         joint.with_fields(checks=run_checks(checks, joint, acting.get(joint.id, ()), basis, options))
@@ -68,6 +71,18 @@ def audit(
         coverage=found.coverage,
         elsewhere=found.elsewhere,
     )
+
+
+def _acting(
+    actions: str | Path | None, contents: Contents, joints: Sequence[Joint], settings: Settings
+) -> MatchedActions:
+    """Return the actions on each joint, from a table or from an analysis model in IFC."""
+    if actions is None:
+        return MatchedActions({}, ())
+    path = Path(actions)
+    if path.suffix.lower() in (".ifc", ".ifczip"):
+        return match_analysis(read_analysis(open_model(path), path), joints, settings.actions)
+    return match_actions(read_actions(path), contents.names, joints)
 
 
 def _basis(settings: Settings, joints: Sequence[Joint]) -> Basis:

@@ -52,7 +52,10 @@ def main() -> None:
 @app.command()
 def audit(
     model: Annotated[Path, typer.Argument(metavar="MODEL.ifc", help="The model; it is only read.")],
-    actions: Annotated[Path | None, typer.Option(metavar="FILE.csv", help="A table of design actions.")] = None,
+    actions: Annotated[
+        Path | None,
+        typer.Option(metavar="FILE", help="Design actions: a CSV table, or an IFC file with analysis results."),
+    ] = None,
     config: Annotated[Path | None, typer.Option(metavar="FILE.toml", help="Settings.")] = None,
     out: Annotated[
         Path | None, typer.Option(metavar="DIR", help="Where the results go; <model name>-joints here if not said.")
