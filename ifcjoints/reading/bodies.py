@@ -105,6 +105,11 @@ class BodyReader:
             return []
         return [placed for item in representation.Items for placed in self.item(item)]
 
+    @property
+    def length_unit(self) -> Mm:
+        """The mm in one unit of length of the model."""
+        return self._placements.length
+
     def world_of(self, element: Any) -> Array:
         """Return an element's placement in the world."""
         return self._placements.of_element(element.ObjectPlacement)

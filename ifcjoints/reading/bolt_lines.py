@@ -1,7 +1,8 @@
-"""Bolts drawn as a line of two points, from under the head to the end of the thread."""
+"""Elements drawn as lines: a bolt from under its head to the end of its thread, a weld along its path."""
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from typing import Any
 
 import numpy as np
@@ -12,11 +13,16 @@ from .axial import BoltBody
 
 def bolts_from_lines(element: Any, length_unit: float) -> list[BoltBody]:
     """Return a bolt for each two-point line among an element's representations, in the element's own axes."""
+    pairs = [line for line in lines_of(element) if len(line) == 2 and len(line[0]) == 3]
+    return [_bolt(np.array(pair, float) * length_unit) for pair in pairs]
+
+
+def lines_of(element: Any) -> list[Sequence[Sequence[float]]]:
+    """Return the points of every line among an element's representations, as the model writes them."""
     if element.Representation is None:
         return []
     items = [item for each in element.Representation.Representations for item in each.Items]
-    ends = [points for item in items if (points := _points(item)) is not None and len(points) == 2]
-    return [_bolt(np.array(pair, float)[:, :3] * length_unit) for pair in ends if len(pair[0]) == 3]
+    return [points for item in items if (points := _points(item)) is not None]
 
 
 def _points(curve: Any) -> Any | None:

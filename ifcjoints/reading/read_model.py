@@ -24,7 +24,7 @@ from .designations import read_designation
 from .fastener_kinds import is_named_bolt
 from .fasteners import FastenerReader
 from .faults import body_faults, doubled_ids
-from .holes import hole_from_opening, holes_in_plate
+from .holes import hole_from_opening, holes_in_solid
 from .kernel import solid_from_kernel
 from .materials import read_grade
 from .members import as_built_up, as_member
@@ -44,9 +44,6 @@ NOT_STEELWORK = (
 
 NEAR: Mm = 1000.0
 """A part whose box lies farther than this from every bolt belongs to no joint: end plates are smaller."""
-
-WIDEST_HOLE: Mm = 60.0
-"""An opening wider than this is no bolt hole but a cope or a notch (M42 in its hole is 45 mm)."""
 
 CORNERS = np.array([[bool(number >> axis & 1) for axis in range(3)] for number in range(8)])
 
@@ -72,6 +69,7 @@ class _Reading:
         self.problems: list[Problem] = []
         self.shapes: dict[Piece, tuple[Prism | None, MemberShape | None]] = {}
         self.built_up: dict[tuple[Piece, ...], MemberShape | None] = {}
+        self.drilled: dict[Piece, list[Hole]] = {}
         self.openings = self._openings()
 
     def contents(self, path: Path | None, progress: Progress) -> Contents:
@@ -88,11 +86,10 @@ class _Reading:
                 bolts += self._guarded(element, self.fasteners.read_by_shape) or []
         progress("bolts read", 0.2)
         elements = [each for each in self._sorted("IfcElement") if not any(map(each.is_a, NOT_STEELWORK))]
-        misclassed = {
-            each.id(): self._guarded(each, self.fasteners.read_by_shape) for each in filter(is_named_bolt, elements)
-        }
-        bolts += [bolt for found in misclassed.values() for bolt in found or ()]
-        elements = [each for each in elements if not misclassed.get(each.id())]
+        for element in filter(is_named_bolt, elements):
+            bolts += self._guarded(element, self.fasteners.read_by_shape) or []
+        found = {bolt.step_id for bolt in bolts}
+        elements = [each for each in elements if each.id() not in found]
         bodies: list[tuple[Any, list[PlacedPiece]]] = []
         for number, element in enumerate(elements):
             pieces = self._guarded(element, self._pieces) if element.Representation is not None else None
@@ -157,7 +154,7 @@ class _Reading:
             tuple(placed.in_world() for placed in pieces) if not mended else (mended.as_solid(),),
             plate,
             member,
-            (*(holes_in_plate(plate) if plate else ()), *drilled),
+            (*self._cut_holes(pieces), *drilled),
             notches,
         )
 
@@ -191,11 +188,20 @@ class _Reading:
         for opening in self.openings.get(element.id(), ()):
             for placed in self._guarded(opening, self.bodies.pieces) or []:
                 hole = hole_from_opening(placed)
-                if hole is None or hole.diameter > WIDEST_HOLE:
+                if hole is None:
                     notches.append(placed.in_world())
                 else:
                     drilled.append(hole)
         return drilled, tuple(notches)
+
+    def _cut_holes(self, pieces: list[PlacedPiece]) -> list[Hole]:
+        """Return the holes that are cut into an element's bodies; shared shapes are searched once."""
+        found = []
+        for placed in pieces:
+            if placed.piece not in self.drilled:
+                self.drilled[placed.piece] = holes_in_solid(placed.piece.solid)
+            found += [_hole_moved(hole, placed.matrix) for hole in self.drilled[placed.piece]]
+        return found
 
     def _openings(self) -> dict[int, list[Any]]:
         found: dict[int, list[Any]] = {}
@@ -257,6 +263,11 @@ def _box(pieces: list[PlacedPiece]) -> Array:
 
 def _plate_moved(plate: Prism, matrix: Array) -> Prism:
     return Prism(_frame_moved(plate.frame, matrix), plate.outline, plate.holes, plate.thickness)
+
+
+def _hole_moved(hole: Hole, matrix: Array) -> Hole:
+    turn = matrix[:3, :3]
+    return Hole(turn @ hole.centre + matrix[:3, 3], turn @ hole.direction, hole.diameter, hole.slot)
 
 
 def _frame_moved(frame: Frame, matrix: Array) -> Frame:

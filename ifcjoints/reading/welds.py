@@ -7,7 +7,9 @@ from typing import Any
 import numpy as np
 
 from ..model.parts import WeldPart
+from ..model.units import Array
 from .bodies import BodyReader
+from .bolt_lines import lines_of
 from .properties import PropertyTable
 
 SQRT_HALF = 0.5**0.5
@@ -20,11 +22,10 @@ def is_weld(element: Any) -> bool:
 
 
 def read_weld(element: Any, bodies: BodyReader, properties: PropertyTable) -> WeldPart | None:
-    """Return a weld with a body; None without one. The throat is read, or leg / √2 of an equal-leg fillet."""
-    pieces = bodies.pieces(element)
-    if not pieces:
+    """Return a weld with a body or a path, or None. The throat is read, or leg / √2 of an equal-leg fillet."""
+    points = _points(element, bodies)
+    if points is None:
         return None
-    points = np.vstack([piece.in_world().vertices for piece in pieces])
     throat, leg = properties.length(element, "weld_throat"), properties.length(element, "weld_leg")
     size = throat[0] if throat else leg[0] * SQRT_HALF if leg else None
     return WeldPart(
@@ -34,3 +35,16 @@ def read_weld(element: Any, bodies: BodyReader, properties: PropertyTable) -> We
         properties.text(element, "weld_type") or element.ObjectType or "weld",
         size,
     )
+
+
+def _points(element: Any, bodies: BodyReader) -> Array | None:
+    """Return the corners of a weld's body, or else the points of the path it is drawn as, in the world."""
+    pieces = bodies.pieces(element)
+    if pieces:
+        return np.vstack([piece.in_world().vertices for piece in pieces])
+    path = [point for line in lines_of(element) for point in line if len(point) == 3]
+    if not path:
+        return None
+    world = bodies.world_of(element)
+    points: Array = np.array(path, float) * bodies.length_unit @ world[:3, :3].T + world[:3, 3]
+    return points
