@@ -3,22 +3,22 @@
 from __future__ import annotations
 
 from collections.abc import Callable
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 from ifcjoints.checking import NotCheckable, Quantity, Subject, Trace, greatest, least
-from ifcjoints.model.joints import Provenance
-from ifcjoints.tables.bolts import BoltGrade, bolt_grade, tensile_stress_area
+from ifcjoints.tables.bolts import BoltGrade, BoltSize, bolt_grade, bolt_size
 
 from . import bolts_aisc360 as aisc
 from . import bolts_en1993 as en
+from .origins import origin
 
 
 @dataclass(frozen=True, slots=True)
 class BoltResistance:
     """Design resistances of one bolt in N.
 
-    `beside_shear` gives the tension resistance that a shear force leaves; `interaction` the ratio, at most
-    1 where it holds, of a tension beside a shear force, and its clause.
+    `beside_shear` gives the tension resistance that a shear force leaves; `interaction` the ratio of a tension
+    beside a shear force, at most 1 where it holds, and `clause` where it stands.
     """
 
     tension: Quantity
@@ -27,45 +27,59 @@ class BoltResistance:
     interaction: Callable[[Quantity, Quantity], Quantity]
     clause: str
 
+    def reduced(self, F_vEd: Quantity, trace: Trace) -> BoltResistance:
+        """Return the bolt with what is left of its tension resistance beside a shear force."""
+        left = trace.step("F_t,V", self.beside_shear(F_vEd), "kN", f"{self.clause}, beside F_v,Ed")
+        return replace(self, tension=left)
+
 
 def bolt_resistance(subject: Subject, trace: Trace) -> BoltResistance:
     """Work out the resistances of the joint's bolt; NotCheckable says what is lacking."""
-    bolts = subject.joint.bolts
-    if bolts.diameter_mm is None:
-        raise NotCheckable("the bolts' diameter is not known; give it in the model (NominalDiameter or a body).")
-    grade = bolt_grade(bolts.grade) if bolts.grade else None
-    if grade is None:
-        told = (
-            f'the bolts\' grade "{bolts.grade}" is not in the tables'
-            if bolts.grade
-            else "the bolts' grade is not known"
+    grade, size = _grade(subject), _size(subject)
+    told = origin(subject, "bolts.diameter")
+    d = trace.given("d", size.d, "mm", f"{size.name} ({told})")
+    if grade.standard == "AISC 360":
+        return _aisc(subject, trace, grade, d)
+    if not size.metric:
+        raise NotCheckable(
+            f"the bolts are {size.name} of grade {grade.name}, and property classes are for metric sizes; "
+            "correct the diameter or the grade in the model."
         )
+    return _en(subject, trace, grade, size)
+
+
+def _grade(subject: Subject) -> BoltGrade:
+    text = subject.joint.bolts.grade
+    grade = bolt_grade(text) if text else None
+    if grade is None:
+        told = f'the bolts\' grade "{text}" is not in the tables' if text else "the bolts' grade is not known"
         raise NotCheckable(f"{told}; give it in the model or set [defaults] bolt_grade.")
     if grade.standard != subject.basis.standard:
         raise NotCheckable(
             f"bolts of grade {grade.name} are not covered by {subject.basis.standard}; "
             f'set [basis] standard = "{grade.standard}".'
         )
-    d = trace.given("d", bolts.diameter_mm, "mm", _origin(subject, "bolts.diameter"))
-    work_out = _en if grade.standard == "EN 1993-1-8" else _aisc
-    return work_out(subject, trace, grade, d)
+    return grade
 
 
-def _origin(subject: Subject, key: str) -> str:
-    origin: Provenance | None = subject.joint.provenance.get(key)
-    return f"{origin.source}: {origin.detail}" if origin else "given"
+def _size(subject: Subject) -> BoltSize:
+    d = subject.joint.bolts.diameter_mm
+    if d is None:
+        raise NotCheckable("the bolts' diameter is not known; give it in the model (NominalDiameter or a body).")
+    size = bolt_size(d)
+    if size is None:
+        raise NotCheckable(
+            f"the bolts' diameter of {d:.2f} mm is no size of the metric coarse or the inch series; "
+            "give the nominal diameter in the model (NominalDiameter)."
+        )
+    return size
 
 
-def _en(subject: Subject, trace: Trace, grade: BoltGrade, d: Quantity) -> BoltResistance:
-    area = tensile_stress_area(float(d))
-    if area is None:
-        raise NotCheckable(f"a diameter of {float(d):.2f} mm is no size of the metric coarse series (ISO 261).")
-    A_s = trace.given("A_s", area, "mm²", "ISO 898-1, coarse thread")
-    f_ub = trace.given(
-        "f_ub", grade.f_ub, "N/mm²", f"EN 1993-1-8:2005, Table 3.1, {grade.name} ({_origin(subject, 'bolts.grade')})"
-    )
+def _en(subject: Subject, trace: Trace, grade: BoltGrade, size: BoltSize) -> BoltResistance:
+    A_s = trace.given("A_s", size.A_s, "mm²", size.source)
+    f_ub = trace.given("f_ub", grade.f_ub, "N/mm²", f"{grade.source}, {grade.name} ({origin(subject, 'bolts.grade')})")
     gamma_M2 = trace.given("γ_M2", subject.basis.gamma_M2, "", "settings")
-    k_2 = trace.given("k_2", en.K_2, "", en.TABLE)
+    k_2 = trace.given("k_2", en.K_2, "", f"{en.TABLE}, bolts not countersunk")
     alpha_v = trace.given("α_v", en.ALPHA_V[grade.name], "", f"{en.TABLE}, threads in the shear plane")
     F_tRd = trace.step("F_t,Rd", en.tension_resistance(k_2, f_ub, A_s, gamma_M2), "kN", en.TABLE)
     F_vRd = trace.step("F_v,Rd", en.shear_resistance(alpha_v, f_ub, A_s, gamma_M2), "kN", en.TABLE)
@@ -81,7 +95,7 @@ def _en(subject: Subject, trace: Trace, grade: BoltGrade, d: Quantity) -> BoltRe
 
 def _aisc(subject: Subject, trace: Trace, grade: BoltGrade, d: Quantity) -> BoltResistance:
     threads = "in" if grade.threads_in_shear_plane else "out of"
-    table = f"AISC 360-22, Table J3.2, {grade.name} ({_origin(subject, 'bolts.grade')})"
+    table = f"{grade.source}, {grade.name} ({origin(subject, 'bolts.grade')})"
     F_nt = trace.given("F_nt", grade.F_nt, "N/mm²", table)
     F_nv = trace.given("F_nv", grade.F_nv, "N/mm²", f"{table}, threads {threads} the shear plane")
     phi = trace.given("φ", subject.basis.phi_bolt, "", "settings")
@@ -90,12 +104,10 @@ def _aisc(subject: Subject, trace: Trace, grade: BoltGrade, d: Quantity) -> Bolt
     shear = trace.step("φR_nv", aisc.strength(phi, F_nv, A_b), "kN", aisc.CLAUSE)
     zero = trace.constant("0", 0.0)
 
-    def beside(shear_force: Quantity) -> Quantity:
-        stress = least(F_nt, aisc.reduced_tension_stress(F_nt, F_nv, shear_force / A_b, phi))
+    def beside(F_v: Quantity) -> Quantity:
+        stress = least(F_nt, aisc.reduced_tension_stress(F_nt, F_nv, F_v / A_b, phi))
         return aisc.strength(phi, greatest(zero, stress), A_b)
 
-    def interaction(tension_force: Quantity, shear_force: Quantity) -> Quantity:
-        left = beside(shear_force)
-        return tension_force / left if float(left) > 0 else shear_force / shear + tension_force / tension
-
-    return BoltResistance(tension, shear, beside, interaction, aisc.COMBINED_CLAUSE)
+    return BoltResistance(
+        tension, shear, beside, lambda F_t, F_v: aisc.combined(F_t, tension, F_v, shear), aisc.COMBINED_CLAUSE
+    )

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import math
+
 from ifcjoints.checking import N
 
 CLAUSE = "AISC 360-22, J3.7"
@@ -15,9 +17,18 @@ def strength(phi: N, F_n: N, A_b: N) -> N:
 
 def shank_area(d: N) -> N:
     """A_b in mm², the area of the unthreaded body of a bolt of diameter d in mm (J3.7)."""
-    return 0.7853981633974483 * d**2
+    return math.pi / 4 * d**2
 
 
 def reduced_tension_stress(F_nt: N, F_nv: N, f_rv: N, phi: N) -> N:
     """F'_nt in N/mm² beside a shear stress f_rv (J3.8, LRFD), before it is capped at F_nt."""
-    return 1.3 * F_nt - F_nt * f_rv / (phi * F_nv)
+    return 1.3 * F_nt - F_nt / (phi * F_nv) * f_rv
+
+
+def combined(tension: N, tension_strength: N, shear: N, shear_strength: N) -> N:
+    """Return the interaction of tension and shear, to be at most 1.
+
+    J3.8 solved for the load: tension ≤ φ F'_nt A_b is tension/φR_nt + shear/φR_nv ≤ 1.3. Unlike the ratio to
+    F'_nt it grows in proportion to the load.
+    """
+    return (tension / tension_strength + shear / shear_strength) / 1.3

@@ -4,7 +4,7 @@ What it checks
 --------------
 The bolt rows of an end plate under a moment, with axial force and shear, when the rows may stretch until each
 carries what its bolts can. The rows are filled from the farthest one inwards until the compression flange is at
-its resistance. The check states the moment so reached and, under a design action, the row forces that balance it.
+its resistance. The check states the moment so reached and, under a design action, row forces that balance it.
 
 Why it matters
 --------------
@@ -13,68 +13,66 @@ on ductility, and someone must have made sure of that.
 
 Method and clause
 -----------------
-Lower-bound statics: F_r ≤ n_r F_t,Rd, ΣF ≤ F_c,Rd + N, M_Rd = Σ F_r y_r − N e_N. Rows beyond the compression
-flange are used only to carry axial tension. Beside shear (shared equally by all bolts) F_t,Rd falls to what the
-interaction of EN 1993-1-8:2005, Table 3.4, or AISC 360-22, J3.8, leaves. Where rows are brittle, the force per
-bolt of a row is limited to that of the farthest row in proportion to the lever arms, after the idea of
-EN 1993-1-8:2005, 6.2.7.2(9). Option `triangular_limit`: "brittle_rows" (default) applies that limit unless the end
-plate, or the column flange or second end plate bolted to it, is thin enough to yield before the bolts,
-t ≤ d/1.9·√(f_ub/f_y) (SCI P398, step 1C; UK NA to BS EN 1993-1-8, NA.2.7: from memory); "always" and "never" do as
-they say.
+Lower-bound statics: F_r ≤ n_r F_t,Rd and ΣF ≤ F_c,Rd + N, filled from the farthest row; M_Rd = ΣF_r y_r − N e_N, with y
+from the compression flange's centre line and e_N the distance of the member's axis. Rows with y ≤ 0 are used only as
+far as an axial tension needs them.
+
+Beside shear (V shared equally by all bolts) F_t,Rd falls to what the interaction of EN 1993-1-8:2005, Table 3.4, or
+AISC 360-22, J3.8, leaves: F_t,V. Where that lowers the moment, both are stated: M beside V, and M without V.
+
+Where rows are brittle the force per bolt of a row is at most that of the farthest row in proportion to the lever arms,
+after the idea of EN 1993-1-8:2005, 6.2.7.2(9). The option `triangular_limit` says when: "brittle_rows" (the default)
+unless the end plate, or the column flange or second end plate bolted to it, is thin enough to yield before the bolts
+break, t ≤ d/1.9·√(f_ub/f_y) (SCI P398, step 1C; UK NA to BS EN 1993-1-8, NA.2.7: from memory); "always" and "never" as
+they say. Where brittle rows leave the joint open, the linear distribution of the elastic check answers.
+
+The utilisation is |M| over M_Rd at the action's axial force and shear, or the bolts' shear, the flanges' compression or
+the axial tension over all bolts where that is more. The row forces at the action are filled from the farthest row until
+they balance M; in an open joint they lie between the distributions filled from either side with N.
 
 Needs
 -----
 As the elastic check; and for the option "brittle_rows" the thickness and grade of the end plate or of what it is
-bolted to. Where those are not known the rows count as brittle.
+bolted to. Where those are not known the rows count as brittle, and the steps say so.
 
 Limits
 ------
-It assumes no prying and no limit from bending of the end plate or the column's flange, or from the webs and welds:
-the component method does those. Its moment is therefore an upper bound of theirs, never an approval by itself. It
-supports a competent engineer's check and replaces neither it nor the governing code.
+It assumes no prying and no limit from bending or punching of the end plate or the column's flange, or from webs and
+welds: the component method does those. Its moment is therefore an upper bound of theirs, never an approval by itself.
+Where the action is more than the rows can balance, the row forces shown are those at the resistance. Where the axial
+force alone is too much the resistance is nil, and the ratios are those of the linear distribution; a moment that would
+relieve the joint is not counted on. It supports a competent engineer's check and replaces neither it nor the governing
+code.
 
 Example
 -------
-Rows at 450, 340 and 60 mm with two bolts of F_t,Rd = 203 kN each and a flange good for 863 kN: the first two rows
-take 406 kN each, the third only 863 − 813 = 50 kN, so M_Rd = 406·0.450 + 406·0.340 + 50·0.060 = 324 kNm.
+Rows at 450, 340 and 60 mm with two M24 8.8 each, F_t,Rd = 203.0 kN a bolt, that may stretch, and a flange good for
+862.7 kN: the first two rows take 406.1 kN each and the third the remaining 50.5 kN, so
+M_Rd = 406.1·0.450 + 406.1·0.340 + 50.5·0.060 = 323.8 kNm.
 """
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import replace
 from typing import Literal
 
-from ifcjoints.checking import N as Number
-from ifcjoints.checking import Quantity, Subject, Trace, Verdict, check, greatest, least, root
+from ifcjoints.checking import Quantity, Subject, Trace, Verdict, check
 from ifcjoints.checking.testing import example_cases
 from ifcjoints.model.base import Frozen
-from ifcjoints.model.joints import Joint
-from ifcjoints.tables.bolts import bolt_grade
-from ifcjoints.tables.steels import steel_grade
 
 from .bolt import BoltResistance, bolt_resistance
-from .elastic import distribution, moment_limit, utilise
-from .flange import flange_resistance, interface_of
-from .statics import BoltRow, LinearGroup, Loads, given_loads, given_rows, total
-
-METHOD = "rows filled from the farthest inwards"
-NO_PRYING = f"{METHOD}; no prying, no plate or flange bending"
-DUCTILE = "SCI P398, step 1C (from memory)"
+from .brittleness import why_brittle
+from .elastic import linear_use, nil_resistance
+from .filling import METHOD, Limit, plastic_limit, plastic_spread
+from .flange import interface_of
+from .group import STATICS, Group, Loads, Spread, given_loads, group_of
+from .use import Ratios, beyond_alone, flanges_pressed, governing
 
 
 class PlasticOptions(Frozen):
     """`triangular_limit`: whether rows keep to a triangle below the farthest one."""
 
     triangular_limit: Literal["never", "brittle_rows", "always"] = "brittle_rows"
-
-
-@dataclass(frozen=True, slots=True)
-class Filled:
-    """Row forces by place in `joint.rows`, and the moment M_c they give; N and Nmm."""
-
-    rows: dict[int, Quantity]
-    M_c: Quantity
-    limit: str
 
 
 @check(
@@ -86,161 +84,82 @@ class Filled:
 )
 def plastic(subject: Subject, trace: Trace) -> Verdict:
     """Check the joint's rows by the plastic method."""
-    interface = interface_of(subject)
+    interface_of(subject)
     bolt = bolt_resistance(subject, trace)
-    flange = flange_resistance(subject, trace)
-    brittle = rows_are_brittle(subject, trace)
-    rows = given_rows(subject, trace)
-    loads = given_loads(subject, interface, trace)
-    z = trace.given("z", interface.flange_distance_mm, "mm", "between the flange centre lines")
-    whole_bolt, bolt = bolt, beside_shear(subject, bolt, loads, trace)
-    filled = fill(rows, bolt.tension, flange, loads, brittle, trace)
-    if filled is None:
-        group = LinearGroup.of(rows, trace)
-        M_cRd, limit = moment_limit(rows, group, loads, bolt, (flange, z), trace)
-        forces = distribution(rows, group, M_cRd, loads.N, z, trace).rows
-        filled = Filled(forces, M_cRd, limit)
-    M_Rd = trace.step("M_Rd", greatest(filled.M_c - loads.N * loads.e_N, trace.constant("0", 0.0)), "kNm", NO_PRYING)
-    forces, utilisation, governing = filled.rows, None, filled.limit
-    if subject.action is not None:
-        M_cEd = trace.step("M_c,Ed", loads.M + loads.N * loads.e_N, "kNm", METHOD)
-        group = LinearGroup.of(rows, trace)
-        if float(M_Rd) > 0 and group.bears(M_cEd, loads.N):
-            utilisation = float(trace.step("η", loads.M / M_Rd, "", NO_PRYING))
-            forces = (
-                _at_action(rows, group, M_cEd, loads, (bolt.tension, z, brittle), trace) if utilisation <= 1 else forces
-            )
-        else:
-            spread = distribution(rows, group, M_cEd, loads.N, z, trace)
-            utilisation, governing = utilise(subject, spread, rows, loads, whole_bolt, flange, trace)
-            forces = spread.rows
-    pull = sum(float(force) for force in forces.values())
+    loads = given_loads(subject, trace)
+    brittle = triangular_limit(subject, trace)
+    group = group_of(subject, bolt.tension, loads.N, trace)
+    beside, resistance = group, {}
+    if float(loads.V) > 0:
+        beside = replace(group, tension=trace.step("F_t,V", bolt.beside_shear(loads.F_v), "kN", bolt.clause))
+    if beside.tension < group.tension:
+        M_Rd0, _ = moment_resistance(group, brittle, ",0", trace)
+        resistance["M_without_V_kNm"] = float(M_Rd0) / 1e6
+    M_Rd, limit = moment_resistance(beside, brittle, "", trace)
+    utilisation = None
+    if subject.action is None and limit is not None:
+        spread, governs = limit.spread, limit.stop
+    else:
+        spread, ratios = use_at(beside, loads, (M_Rd, limit), brittle, trace) or linear_answer(
+            group, bolt, loads, trace
+        )
+        ratios |= {"bolt shear": trace.step("η_v", loads.F_v / bolt.shear, "", bolt.clause)} if loads.V > 0 else {}
+        utilisation, governs = governing(ratios)
     return Verdict(
-        resistance={"M_kNm": float(M_Rd) / 1e6},
-        governing=governing,
+        resistance={"M_kNm": float(M_Rd) / 1e6} | resistance,
+        governing=governs,
         utilisation=utilisation,
-        row_forces_kN=[float(forces[index]) / 1e3 for index in range(len(rows))],
-        compression_kN=(pull - float(loads.N)) / 1e3,
+        row_forces_kN=[float(spread.rows[index]) / 1e3 for index in range(len(group.rows))],
+        compression_kN=spread.compression / 1e3,
     )
 
 
-def ductile_thickness(d: Number, f_ub: Number, f_y: Number) -> Number:
-    """Greatest thickness in mm at which a plate yields before its bolts, d/1.9·√(f_ub/f_y) (SCI P398, step 1C)."""
-    return d / 1.9 * root(f_ub / f_y)
-
-
-def rows_are_brittle(subject: Subject, trace: Trace) -> bool:
-    """Whether the triangular limit applies, by the option and the thickness of what is bolted together."""
+def triangular_limit(subject: Subject, trace: Trace) -> str:
+    """Return why rows keep to a triangle, or nothing where they need not."""
     options = subject.options if isinstance(subject.options, PlasticOptions) else PlasticOptions()
-    if options.triangular_limit != "brittle_rows":
-        return options.triangular_limit == "always"
-    grade = bolt_grade(subject.joint.bolts.grade or "")
-    strength = (grade.f_ub or grade.F_nt / 0.75) if grade else 0.0
-    d, f_ub = trace.constant("d", subject.joint.bolts.diameter_mm or 0.0), trace.constant("f_ub", strength)
-    for name, thickness, steel in _bolted_plates(subject.joint):
-        found = steel_grade(steel, thickness) if steel and thickness else None
-        if found is None or thickness is None:
-            continue
-        t = trace.given(f"t ({name})", thickness, "mm", name)
-        f_y = trace.given(f"f_y ({name})", found.f_y, "N/mm²", found.name)
-        if t <= trace.step(f"t_max ({name})", ductile_thickness(d, f_ub, f_y), "mm", DUCTILE):
-            return False
-    return True
+    if options.triangular_limit == "brittle_rows":
+        return why_brittle(subject, trace)
+    return "option triangular_limit is always" if options.triangular_limit == "always" else ""
 
 
-def _bolted_plates(joint: Joint) -> list[tuple[str, float | None, str | None]]:
-    """Return the end plates, and the column's flange where that is what they are bolted to."""
-    plates = [("end plate", plate.thickness_mm, plate.grade) for plate in joint.plates if plate.role == "end_plate"]
-    carrier = joint.supporting
-    if joint.configuration == "beam_to_column_flange" and carrier is not None and carrier.section is not None:
-        return [*plates, ("column flange", carrier.section.tf_mm, carrier.grade)]
-    return list(plates)
+def moment_resistance(group: Group, brittle: str, mark: str, trace: Trace) -> tuple[Quantity, Limit | None]:
+    """Return M_Rd beside the axial force, and the forces at it; nil and None where that force alone is too much."""
+    if float(group.N):
+        aside = Trace()
+        if plastic_spread(group, group.M_c_alone(aside), brittle, ",N", aside) is None:
+            return nil_resistance("the axial force alone", f"M_Rd{mark}", trace), None
+    limit = plastic_limit(group, brittle, mark, trace)
+    return trace.step(f"M_Rd{mark}", group.about_axis(limit.M_c), "kNm", METHOD), limit
 
 
-def beside_shear(subject: Subject, bolt: BoltResistance, loads: Loads, trace: Trace) -> BoltResistance:
-    """Return the bolt with the tension resistance that the shear force leaves."""
-    if float(loads.V) == 0:
-        return bolt
-    count = trace.given("n_bolts", subject.joint.bolts.count, "", "bolts of the joint")
-    F_vEd = trace.step("F_v,Ed", loads.V / count, "kN", "shear shared equally by all bolts")
-    tension = trace.step("F_t,Rd,V", bolt.beside_shear(F_vEd), "kN", f"{bolt.clause}, beside F_v,Ed")
-    return BoltResistance(tension, bolt.shear, bolt.beside_shear, bolt.interaction, bolt.clause)
+def use_at(
+    group: Group, loads: Loads, resistance: tuple[Quantity, Limit | None], brittle: str, trace: Trace
+) -> tuple[Spread, Ratios] | None:
+    """Return the forces at the action, or those at the resistance where it is exceeded, and the ratios.
 
-
-def fill(
-    rows: list[BoltRow], F_tRd: Quantity, F_cRd: Quantity, loads: Loads, brittle: bool, trace: Trace
-) -> Filled | None:
-    """Fill the rows to the most they can carry; None where only the linear distribution answers.
-
-    That is so where the compression flange alone carries N, where brittle rows open altogether, and where the
-    bolts cannot carry N.
+    None where the resistance is nil, so that nothing can be put in relation to it.
     """
-    left = F_cRd + loads.N
-    if float(left) <= 0:
+    M_Rd, limit = resistance
+    if limit is None:
         return None
-    left = trace.step("ΣF_max", left, "kN", "equilibrium with the compression flange at its resistance")
-    forces: dict[int, Quantity] = {}
-    limit, first = "", rows[0]
-    for row in rows:
-        forces[row.index] = trace.constant(f"F_{row.index + 1}", 0.0)
-        if row.y <= 0 or float(left) <= 0:
-            continue
-        cap = row.n * F_tRd
-        if brittle and row is not first:
-            cap = least(cap, row.n * (forces[first.index] / first.n) * row.y / first.y)
-        at_limit = first if brittle else row
-        limit = "compression flange" if float(left) < float(cap) else f"row {at_limit.index + 1}, bolt tension"
-        forces[row.index] = trace.step(f"F_{row.index + 1}", least(cap, left), "kN", NO_PRYING)
-        left = left - forces[row.index]
-    if sum(map(float, forces.values())) < float(loads.N):
-        return None if brittle else _opened(rows, forces, F_tRd, loads, trace)
-    M_c = trace.step("M_c,Rd", total([forces[row.index] * row.y for row in rows]), "kNm", NO_PRYING)
-    return Filled(forces, M_c, limit)
-
-
-def _opened(
-    rows: list[BoltRow], forces: dict[int, Quantity], F_tRd: Quantity, loads: Loads, trace: Trace
-) -> Filled | None:
-    """Let the rows beyond the compression flange carry the rest of an axial tension; None if they cannot."""
-    for row in rows:
-        rest = float(loads.N) - sum(map(float, forces.values()))
-        if row.y <= 0 and rest > 0:
-            needed = loads.N - total(list(forces.values()))
-            forces[row.index] = trace.step(f"F_{row.index + 1}", least(row.n * F_tRd, needed), "kN", NO_PRYING)
-    if sum(map(float, forces.values())) < float(loads.N) * (1 - 1e-12):
+    M_cEd = trace.step("M_c,Ed", group.about_flange(loads.M), "kNm", STATICS)
+    spread = plastic_spread(group, M_cEd, brittle, ",Ed", trace)
+    if spread is None and not 0 < float(M_Rd) < float(loads.M):
         return None
-    M_c = trace.step("M_c,Rd", total([forces[row.index] * row.y for row in rows]), "kNm", NO_PRYING)
-    return Filled(forces, M_c, "bolt tension of every row")
+    ratios = {} if spread is None else flanges_pressed(spread, group, trace)
+    if float(loads.N) > 0:
+        ratios["axial tension"] = trace.step("η_N", loads.N / (group.count * group.tension), "", STATICS)
+    if float(M_Rd) > 0:
+        ratios[limit.stop] = trace.step("η", loads.M / M_Rd, "", METHOD)
+    return spread or limit.spread, ratios
 
 
-def _at_action(
-    rows: list[BoltRow],
-    group: LinearGroup,
-    M_cEd: Quantity,
-    loads: Loads,
-    limits: tuple[Quantity, Quantity, bool],
-    trace: Trace,
-) -> dict[int, Quantity]:
-    """Return row forces that balance the action: filled from the farthest row, or linear where that cannot be."""
-    F_tRd, z, brittle = limits
-    forces, carried = _filled_to(rows, M_cEd, F_tRd, trace)
-    balanced = abs(carried - float(M_cEd)) <= 1e-9 * abs(float(M_cEd))
-    if not brittle and balanced and sum(map(float, forces.values())) >= float(loads.N):
-        return {
-            index: trace.step(f"F_{index + 1},Ed", force, "kN", NO_PRYING) for index, force in sorted(forces.items())
-        }
-    return distribution(rows, group, M_cEd, loads.N, z, trace).rows
-
-
-def _filled_to(
-    rows: list[BoltRow], M_cEd: Quantity, F_tRd: Quantity, trace: Trace
-) -> tuple[dict[int, Quantity], float]:
-    """Fill rows from the farthest inwards until they balance M_c,Ed; return the forces and the moment carried."""
-    forces: dict[int, Quantity] = {}
-    left = M_cEd
-    for row in rows:
-        forces[row.index] = trace.constant("0", 0.0)
-        if row.y > 0 and float(left) > 0:
-            forces[row.index] = least(row.n * F_tRd, left / row.y)
-            left = left - forces[row.index] * row.y
-    return forces, float(M_cEd) - float(left)
+def linear_answer(group: Group, bolt: BoltResistance, loads: Loads, trace: Trace) -> tuple[Spread, Ratios]:
+    """Return the forces and ratios of the elastic check, where there is no moment to put the action in relation to."""
+    alone = {}
+    if float(loads.N):
+        aside = Trace()
+        alone = beyond_alone(linear_use(group, bolt, replace(loads, M=trace.constant("0", 0.0)), aside)[1])
+        trace.steps += aside.steps if alone else []
+    spread, ratios = linear_use(group, bolt, loads, trace)
+    return spread, alone | ratios

@@ -1,15 +1,17 @@
 """For packs and their tests: joints from plain figures, and a runner for the cases a check carries.
 
-@pytest.mark.parametrize("case", elastic.cases, ids=lambda case: case.title)
-def test_case(case):
-    run_case(elastic, case)
+    @pytest.mark.parametrize(**case_parameters(elastic))
+    def test_case(case):
+        run_case(elastic, case)
+
+or, without pytest, ``run_cases(elastic)``.
 """
 
 from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import replace
-from typing import Literal
+from typing import Any, Literal
 
 from ..model.actions import Action, FlangeSide, Forces
 from ..model.basis import EDITIONS, Basis, StandardName
@@ -19,13 +21,19 @@ from ..model.units import Mm
 from .contract import Case, Check, NoOptions, Subject
 from .runner import run_check
 
+PLAIN_FIGURES = (
+    "rows", "bolts.diameter", "bolts.grade", "plates.plate.thickness", "plates.plate.grade",
+    "top_flange.thickness", "top_flange.grade", "bottom_flange.thickness", "bottom_flange.grade",
+)  # fmt: skip
 PLAIN_ROWS: tuple[tuple[Mm, int], ...] = ((450.0, 2), (340.0, 2), (60.0, 2))
 
 
 def plain_joint(
     rows: Sequence[tuple[Mm, int]] = PLAIN_ROWS,
     *,
+    gauge: Mm = 110.0,
     flange_distance: Mm = 390.0,
+    axis: Mm | None = None,
     flange: tuple[Mm, Mm] = (180.0, 13.5),
     flange_grade: str | None = "S355",
     inclinations: tuple[float, float] = (0.0, 0.0),
@@ -33,10 +41,12 @@ def plain_joint(
     plate_thickness: Mm = 20.0,
     plate_grade: str | None = "S355",
 ) -> Joint:
-    """Build a moment joint from plain figures.
+    """Build a moment joint from plain figures, with an end plate and nothing known of what carries it.
 
-    `rows` are (y from the bottom flange's centre line, bolts), top to bottom; `flange` is (width, thickness) of
-    both flanges, `inclinations` the bottom and the top flange's angle in degrees; `bolt` (diameter, grade).
+    `rows` are (y from the bottom flange's centre line, bolts), top to bottom, their bolts two by two about the web
+    with this `gauge`; `flange` is (width, thickness) of both flanges, `inclinations` the bottom and the top
+    flange's angle in degrees; `axis` where the member's axis meets the interface (y; by default half-way between
+    the flanges); `bolt` (diameter, grade). Lengths in mm.
     """
     given = Provenance(source="given", detail="plain figures")
     width, thickness = flange
@@ -62,13 +72,14 @@ def plain_joint(
             global_ids=("bolts",), count=sum(count for _, count in rows), diameter_mm=bolt[0], grade=bolt[1],
             hole_diameter_mm=None, grip_mm=None,
         ),
-        rows=tuple(_row(y, count, flange_distance) for y, count in rows),
+        rows=tuple(_row(y, count, gauge, flange_distance) for y, count in rows),
         interface=Interface(
             origin_mm=(0.0, 0.0, 0.0), normal=(1.0, 0.0, 0.0), up=(0.0, 0.0, 1.0), across=(0.0, -1.0, 0.0),
-            flange_distance_mm=flange_distance, axis_y_mm=flange_distance / 2, bottom=flanges[0], top=flanges[1],
+            flange_distance_mm=flange_distance, axis_y_mm=flange_distance / 2 if axis is None else axis,
+            bottom=flanges[0], top=flanges[1],
         ),
         completeness=1.0,
-        provenance={"rows": given, "bolts.diameter": given, "bolts.grade": given},
+        provenance=dict.fromkeys(PLAIN_FIGURES, given),
     )  # fmt: skip
 
 
@@ -78,11 +89,11 @@ def _plate(thickness: Mm, width: Mm, depth: Mm, grade: str | None) -> JointPlate
     )
 
 
-def _row(y: Mm, count: int, flange_distance: Mm) -> Row:
+def _row(y: Mm, count: int, gauge: Mm, flange_distance: Mm) -> Row:
     position: Literal["outside_top", "between", "outside_bottom"] = "between"
     if y > flange_distance or y < 0:
         position = "outside_top" if y > 0 else "outside_bottom"
-    return Row(y_bottom_mm=y, y_top_mm=flange_distance - y, count=count, gauge_mm=110.0, position=position)
+    return Row(y_bottom_mm=y, y_top_mm=flange_distance - y, count=count, gauge_mm=gauge, position=position)
 
 
 def plain_subject(
@@ -113,6 +124,16 @@ def example_cases() -> tuple[Case, ...]:
             missing="grade",
         ),
     )
+
+
+def case_parameters(check: Check) -> dict[str, Any]:
+    """Return the arguments of ``pytest.mark.parametrize`` that run a test once for each case of a check, as `case`."""
+    return {"argnames": "case", "argvalues": check.cases, "ids": [case.title for case in check.cases]}
+
+
+def run_cases(check: Check) -> tuple[Result, ...]:
+    """Run all cases of a check; AssertionError names the first that did not end as it should."""
+    return tuple(run_case(check, case) for case in check.cases)
 
 
 def run_case(check: Check, case: Case) -> Result:

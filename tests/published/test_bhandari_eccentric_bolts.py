@@ -18,7 +18,9 @@ def forces(rows, load_kN, eccentricity_mm):
     subject = plain_subject(joint, (0.0, load_kN, load_kN * eccentricity_mm / 1000))
     result = run_check(elastic, subject)
     shear = next(step.value for step in result.steps if step.symbol == "F_v,Ed") * 1e3
-    return result.row_forces_kN[0] * 1e3 / 2, shear
+    tension = next(step.value for step in result.steps if step.symbol == "F_t,Ed") * 1e3
+    assert result.row_forces_kN[0] * 1e3 == pytest.approx(2 * tension)
+    return tension, shear
 
 
 def test_example_7_5_by_maximum_shear_stress():

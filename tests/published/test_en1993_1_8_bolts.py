@@ -9,6 +9,7 @@ import pytest
 from ifcjoints.checking.runner import run_check
 from ifcjoints.checking.testing import plain_joint, plain_subject
 from ifcjoints.tables.bolts import bolt_grade, tensile_stress_area
+from ifcjoints_bolt_groups.bolts_en1993 import combined, tension_beside_shear
 from ifcjoints_bolt_groups.elastic import elastic
 
 RESISTANCES = [
@@ -49,3 +50,10 @@ def test_strengths_of_table_3_1(grade, f_yb, f_ub):
 def test_stress_areas_of_iso_898_1(diameter, area):
     """ISO 898-1 prints the areas to three digits (from memory)."""
     assert tensile_stress_area(diameter) == pytest.approx(area, abs=0.51 if area > 100 else 0.06)
+
+
+def test_a_bolt_full_in_tension_keeps_two_sevenths_of_its_shear():
+    """1 − 1/1.4 of F_v,Rd; design guides for portal frames take 0.28 (Single-Storey Steel Buildings, Part 11)."""
+    assert combined(0.28, 1.0, 1.0, 1.0) <= 1.0
+    assert combined(1 - 1 / 1.4, 1.0, 1.0, 1.0) == pytest.approx(1.0)
+    assert tension_beside_shear(1 - 1 / 1.4, 1.0, 50.0) == pytest.approx(50.0)
