@@ -24,7 +24,7 @@ from .designations import read_designation
 from .fastener_kinds import is_named_bolt
 from .fasteners import FastenerReader
 from .faults import body_faults, doubled_ids
-from .holes import hole_from_opening, holes_in_solid
+from .holes import hole_from_opening, holes_in_solid, with_holes_seen
 from .kernel import solid_from_kernel
 from .materials import read_grade
 from .members import as_built_up, as_member
@@ -69,6 +69,7 @@ class _Reading:
         self.problems: list[Problem] = []
         self.shapes: dict[Piece, tuple[Prism | None, MemberShape | None]] = {}
         self.built_up: dict[tuple[Piece, ...], MemberShape | None] = {}
+        self.whole: dict[Piece, Piece] = {}
         self.drilled: dict[Piece, list[Hole]] = {}
         self.openings = self._openings()
 
@@ -137,6 +138,7 @@ class _Reading:
     def _part(self, element: Any, pieces: list[PlacedPiece]) -> Part:
         for fault in body_faults(pieces):
             self._problem(element, fault)
+        pieces = [self._with_holes_seen(placed) for placed in pieces]
         plate, member = self._shape(pieces)
         grade, origin = read_grade(element, self.properties)
         designation = read_designation(element, pieces, self.properties) if member else None
@@ -193,6 +195,11 @@ class _Reading:
                 else:
                     drilled.append(hole)
         return drilled, tuple(notches)
+
+    def _with_holes_seen(self, placed: PlacedPiece) -> PlacedPiece:
+        if placed.piece not in self.whole:
+            self.whole[placed.piece] = with_holes_seen(placed.piece)
+        return PlacedPiece(self.whole[placed.piece], placed.matrix)
 
     def _cut_holes(self, pieces: list[PlacedPiece]) -> list[Hole]:
         """Return the holes that are cut into an element's bodies; shared shapes are searched once."""
