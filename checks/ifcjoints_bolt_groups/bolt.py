@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable
-from dataclasses import dataclass, replace
+from dataclasses import dataclass
 
 from ifcjoints.checking import NotCheckable, Quantity, Subject, Trace, greatest, least
 from ifcjoints.tables.bolts import BoltGrade, BoltSize, bolt_grade, bolt_size
@@ -18,7 +18,7 @@ class BoltResistance:
     """Design resistances of one bolt in N.
 
     `beside_shear` gives the tension resistance that a shear force leaves; `interaction` the ratio of a tension
-    beside a shear force, at most 1 where it holds, and `clause` where it stands.
+    beside a shear force, at most 1 where it holds; both stand in `clause`, the resistance to shear in `shear_clause`.
     """
 
     tension: Quantity
@@ -26,11 +26,7 @@ class BoltResistance:
     beside_shear: Callable[[Quantity], Quantity]
     interaction: Callable[[Quantity, Quantity], Quantity]
     clause: str
-
-    def reduced(self, F_vEd: Quantity, trace: Trace) -> BoltResistance:
-        """Return the bolt with what is left of its tension resistance beside a shear force."""
-        left = trace.step("F_t,V", self.beside_shear(F_vEd), "kN", f"{self.clause}, beside F_v,Ed")
-        return replace(self, tension=left)
+    shear_clause: str
 
 
 def bolt_resistance(subject: Subject, trace: Trace) -> BoltResistance:
@@ -90,6 +86,7 @@ def _en(subject: Subject, trace: Trace, grade: BoltGrade, size: BoltSize) -> Bol
         lambda F_vEd: greatest(zero, least(F_tRd, en.tension_beside_shear(F_vEd, F_vRd, F_tRd))),
         lambda F_tEd, F_vEd: en.combined(F_vEd, F_vRd, F_tEd, F_tRd),
         en.TABLE,
+        en.TABLE,
     )
 
 
@@ -108,6 +105,7 @@ def _aisc(subject: Subject, trace: Trace, grade: BoltGrade, d: Quantity) -> Bolt
         stress = least(F_nt, aisc.reduced_tension_stress(F_nt, F_nv, F_v / A_b, phi))
         return aisc.strength(phi, greatest(zero, stress), A_b)
 
-    return BoltResistance(
-        tension, shear, beside, lambda F_t, F_v: aisc.combined(F_t, tension, F_v, shear), aisc.COMBINED_CLAUSE
-    )
+    def interaction(F_t: Quantity, F_v: Quantity) -> Quantity:
+        return aisc.combined(F_t, tension, F_v, shear)
+
+    return BoltResistance(tension, shear, beside, interaction, aisc.COMBINED_CLAUSE, aisc.CLAUSE)

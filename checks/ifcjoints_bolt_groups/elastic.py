@@ -25,9 +25,10 @@ tension the joint is open and the bolts alone carry N and M, linearly about the 
 F_b = N/n + (M_c − N ȳ)(y − ȳ)/Σn(y − ȳ)²; rows join as the line of no force passes them. Where a large N off the bolts'
 centroid presses the other flange, the plate turns about that one.
 
-Shear is shared equally by all bolts. Bolts: EN 1993-1-8:2005, Table 3.4, or AISC 360-22, J3.7 and J3.8, threads in the
-shear plane unless the grade says otherwise. Flanges: plain yield of their area, square to the interface,
-EN 1993-1-1:2005, 6.2.4, or AISC 360-22, J4.4.
+Actions are taken along and square to the member, at its end; where it leaves the interface at an angle they are
+resolved square to and along the interface. Shear is shared equally by all bolts. Bolts: EN 1993-1-8:2005, Table 3.4, or
+AISC 360-22, J3.7 and J3.8, threads in the shear plane unless the grade says otherwise. Flanges: plain yield of their
+area, square to the interface, EN 1993-1-1:2005, 6.2.4, or AISC 360-22, J4.4.
 
 Needs
 -----
@@ -57,8 +58,9 @@ from ifcjoints.checking.testing import example_cases
 
 from .bolt import BoltResistance, bolt_resistance
 from .flange import interface_of
-from .group import STATICS, Group, Loads, Spread, given_loads, group_of
+from .group import Group, Spread, group_of
 from .linear import METHOD, linear_limit, linear_spread
+from .loads import STATICS, Loads, given_loads
 from .use import Ratios, beyond_alone, bolts_and_flanges, governing, shear_and_both
 
 
@@ -81,7 +83,7 @@ def elastic(subject: Subject, trace: Trace) -> Verdict:
     )
     utilisation = None
     if subject.action is None:
-        spread = linear_spread(group, M_cRd, trace)
+        spread = linear_spread(group, M_cRd, "", trace)
     else:
         spread, ratios = linear_use(group, bolt, loads, trace)
         utilisation, governs = governing(alone | ratios)
@@ -97,7 +99,7 @@ def elastic(subject: Subject, trace: Trace) -> Verdict:
 def linear_use(group: Group, bolt: BoltResistance, loads: Loads, trace: Trace) -> tuple[Spread, Ratios]:
     """Return the forces at the action and the ratios of bolts and flanges under them."""
     M_cEd = trace.step("M_c,Ed", group.about_flange(loads.M), "kNm", STATICS)
-    spread = linear_spread(group, M_cEd, trace)
+    spread = linear_spread(group, M_cEd, ",Ed", trace)
     ratios = bolts_and_flanges(spread, group, trace)
     if float(loads.V) > 0:
         ratios |= shear_and_both(spread, group, bolt, loads.F_v, trace)
@@ -114,7 +116,7 @@ def _too_much_alone(group: Group, trace: Trace) -> Ratios:
     if float(group.N) == 0:
         return {}
     aside = Trace()
-    spread = linear_spread(group, group.M_c_alone(aside), aside)
+    spread = linear_spread(group, group.M_c_alone(aside), ",N", aside)
     over = beyond_alone(bolts_and_flanges(spread, group, aside))
     trace.steps += aside.steps if over else []
     return over

@@ -13,8 +13,9 @@ from dataclasses import dataclass
 
 from ifcjoints.checking import Quantity, Trace, least
 
-from .group import STATICS, BoltRow, Group, Spread, total
+from .group import BoltRow, Group, Spread, total
 from .linear import SLACK, compression, linear_limit, linear_spread
+from .loads import STATICS
 
 METHOD = "rows filled from the farthest inwards; no prying, no plate or flange bending"
 MIXED = "joint open: between the rows filled from either side with N"
@@ -38,7 +39,7 @@ def plastic_limit(group: Group, brittle: str, mark: str, trace: Trace) -> Limit:
     the linear distribution answers.
     """
     if float(group.flange) + float(group.N) <= 0:
-        return _linear(group, trace)
+        return _linear(group, mark, trace)
     room = group.flange + group.N if float(group.N) else group.flange
     room = trace.step(f"ΣF_max{mark}", room, "kN", f"{STATICS}, compression flange at its resistance")
     forces = _fill(group, group.pulling, room, brittle, mark, trace)
@@ -46,14 +47,14 @@ def plastic_limit(group: Group, brittle: str, mark: str, trace: Trace) -> Limit:
     stop = "compression flange" if pull >= float(room) * (1 - SLACK) else _bolts_stop(group, brittle)
     if pull < float(group.N):
         if brittle:
-            return _linear(group, trace)
+            return _linear(group, mark, trace)
         rest = trace.step(f"ΔF{mark}", group.N - total(forces.values()), "kN", f"{STATICS}, N not yet carried")
         behind = [row for row in group.rows if row.y <= 0]
         forces |= _fill(group, behind, rest, "", mark, trace)
         stop = "bolt tension, joint open"
     M_c = trace.step(f"M_c,Rd{mark}", _moment(group, forces), "kNm", METHOD)
     forces, zero = _with_zeros(group, forces, trace), trace.constant("0", 0.0)
-    return Limit(M_c, Spread(forces, compression(group, forces, trace), zero), stop)
+    return Limit(M_c, Spread(forces, compression(group, forces, mark, trace), zero), stop)
 
 
 def plastic_spread(group: Group, M_c: Quantity, brittle: str, mark: str, trace: Trace) -> Spread | None:
@@ -62,18 +63,18 @@ def plastic_spread(group: Group, M_c: Quantity, brittle: str, mark: str, trace: 
     if spread is not None or float(group.N) == 0:
         return spread
     if brittle or float(group.N) < 0:
-        return _linear_within(group, M_c, trace)
+        return _linear_within(group, M_c, mark, trace)
     return _open(group, M_c, mark, trace)
 
 
-def _linear(group: Group, trace: Trace) -> Limit:
+def _linear(group: Group, mark: str, trace: Trace) -> Limit:
     M_c, stop = linear_limit(group, trace)
-    return Limit(M_c, linear_spread(group, M_c, trace), stop)
+    return Limit(M_c, linear_spread(group, M_c, mark, trace), stop)
 
 
-def _linear_within(group: Group, M_c: Quantity, trace: Trace) -> Spread | None:
+def _linear_within(group: Group, M_c: Quantity, mark: str, trace: Trace) -> Spread | None:
     aside = Trace()
-    spread = linear_spread(group, M_c, aside)
+    spread = linear_spread(group, M_c, mark, aside)
     if not _within(spread, group):
         return None
     trace.steps += aside.steps
@@ -95,11 +96,11 @@ def _bearing(group: Group, M_c: Quantity, brittle: str, mark: str, trace: Trace)
     forces: Forces = {}
     for row in group.pulling:
         if float(left) > 0:
-            force = least(_cap(group, row, forces, brittle), left / row.y)
+            force = least(left / row.y, *_caps(group, row, forces, brittle))
             forces[row.index] = aside.step(_symbol(row, mark), force, "kN", _reference(brittle))
             left = left - forces[row.index] * row.y
     forces = _with_zeros(group, forces, trace)
-    C = compression(group, forces, aside)
+    C = compression(group, forces, mark, aside)
     scale = SLACK * (float(group.flange) + abs(float(group.N)))
     if float(left) > SLACK * float(M_c) or not -scale <= float(C) <= float(group.flange) + scale:
         return None
@@ -146,18 +147,16 @@ def _fill(group: Group, rows: Iterable[BoltRow], room: Quantity, brittle: str, m
     forces: Forces = {}
     for row in rows:
         if float(room) > 0:
-            force = least(_cap(group, row, forces, brittle), room)
+            force = least(room, *_caps(group, row, forces, brittle))
             forces[row.index] = trace.step(_symbol(row, mark), force, "kN", _reference(brittle))
             room = room - forces[row.index]
     return forces
 
 
-def _cap(group: Group, row: BoltRow, forces: Forces, brittle: str) -> Quantity:
-    """Return the most that a row may carry."""
+def _caps(group: Group, row: BoltRow, forces: Forces, brittle: str) -> list[Quantity]:
+    """Return what limits a row: its bolts, and for brittle rows the triangle below the farthest one."""
     full, far = row.n * group.tension, group.pulling[0] if brittle else row
-    if row is far:
-        return full
-    return least(full, row.n * (forces[far.index] / far.n) * row.y / far.y)
+    return [full] if row is far else [full, row.n * (forces[far.index] / far.n) * row.y / far.y]
 
 
 def _bolts_stop(group: Group, brittle: str) -> str:

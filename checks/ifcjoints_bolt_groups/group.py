@@ -13,10 +13,10 @@ from ifcjoints.checking import NotApplicable, Quantity, Subject, Trace
 from ifcjoints.model.joints import Interface
 
 from .flange import flange_resistance, interface_of, opposite
+from .loads import STATICS
 from .origins import origin
 
-STATICS = "statics"
-TURNED = "the joint bears on its other flange: seen from there"
+TURNED = "seen from the other flange, which is the one that bears or comes nearest to it"
 
 
 @dataclass(frozen=True, slots=True)
@@ -26,19 +26,6 @@ class BoltRow:
     index: int
     n: Quantity
     y: Quantity
-
-
-@dataclass(frozen=True, slots=True)
-class Loads:
-    """The actions: N > 0 in tension, M ≥ 0 in the direction looked at, V ≥ 0; zero where there is no action.
-
-    `F_v` is the shear of one bolt, V shared equally by all the joint's bolts.
-    """
-
-    N: Quantity
-    M: Quantity
-    V: Quantity
-    F_v: Quantity
 
 
 @dataclass(frozen=True, slots=True)
@@ -153,21 +140,6 @@ def sums(rows: Sequence[BoltRow], mark: str, trace: Trace) -> tuple[Quantity, Qu
     S_1 = trace.step(f"Σny{mark}", total(row.n * row.y for row in pulling), "mm", f"{STATICS}, rows with y > 0")
     S_2 = trace.step(f"Σny{mark}²", total(row.n * row.y**2 for row in pulling), "mm²", f"{STATICS}, rows with y > 0")
     return S_1, S_2
-
-
-def given_loads(subject: Subject, trace: Trace) -> Loads:
-    """Record the actions, the moment in the direction looked at."""
-    action, zero = subject.action, trace.constant("0", 0.0)
-    if action is None:
-        return Loads(zero, zero, zero, zero)
-    forces, told = action.forces, f"{action.case}, {action.source}"
-    N = trace.given("N_Ed", forces.N_kN * 1e3, "kN", told)
-    M = trace.given("M_Ed", abs(forces.M_kNm) * 1e6, "kNm", told)
-    V = trace.given("V_Ed", abs(forces.V_kN) * 1e3, "kN", told)
-    if float(V) == 0:
-        return Loads(N, M, V, zero)
-    count = trace.given("n_bolts", subject.joint.bolts.count, "", "bolts of the joint")
-    return Loads(N, M, V, trace.step("F_v,Ed", V / count, "kN", "shear shared equally by all bolts"))
 
 
 def total(terms: Iterable[Quantity]) -> Quantity:

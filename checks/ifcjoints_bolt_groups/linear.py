@@ -21,7 +21,8 @@ from dataclasses import dataclass
 
 from ifcjoints.checking import NotApplicable, Quantity, Trace, least
 
-from .group import STATICS, BoltRow, Group, Spread, total
+from .group import BoltRow, Group, Spread, total
+from .loads import STATICS
 
 METHOD = "linear strain about the bearing flange's centre line"
 OPEN = "joint open: linear strain about the centroid of the bolts that pull"
@@ -55,12 +56,15 @@ class OpenRows:
         return (bolt_force - N / self.n) * self.inertia / (self.rows[0].y - self.mean) + N * self.mean
 
 
-def linear_spread(group: Group, M_c: Quantity, trace: Trace) -> Spread:
-    """Return the forces that balance N and M_c; NotApplicable where bolts and flanges cannot."""
+def linear_spread(group: Group, M_c: Quantity, mark: str, trace: Trace) -> Spread:
+    """Return the forces that balance N and M_c; NotApplicable where bolts and flanges cannot.
+
+    `mark` is set behind the symbols, to tell forces at the action from those at the resistance.
+    """
     if _turns_other_way(group, M_c):
         turned = group.turned(trace)
-        return _spread(turned, group.turned_moment(M_c, trace), trace).turned()
-    return _spread(group, M_c, trace)
+        return _spread(turned, group.turned_moment(M_c, trace), mark, trace).turned()
+    return _spread(group, M_c, mark, trace)
 
 
 def _turns_other_way(group: Group, M_c: Quantity) -> bool:
@@ -72,28 +76,28 @@ def _turns_other_way(group: Group, M_c: Quantity) -> bool:
     return float(M_c) < N * mean
 
 
-def _spread(group: Group, M_c: Quantity, trace: Trace) -> Spread:
+def _spread(group: Group, M_c: Quantity, mark: str, trace: Trace) -> Spread:
     zero = trace.constant("0", 0.0)
     forces = {row.index: zero for row in group.rows}
     if float(group.N) <= 0 and float(M_c) <= 0:
-        near = trace.step("F_c", M_c / group.z - group.N, "kN", TWO_FLANGES)
-        return Spread(forces, near, trace.step("F_c,2", -M_c / group.z, "kN", TWO_FLANGES))
+        near = trace.step(f"F_c{mark}", M_c / group.z - group.N, "kN", TWO_FLANGES)
+        return Spread(forces, near, trace.step(f"F_c,2{mark}", -M_c / group.z, "kN", TWO_FLANGES))
     if _bears(group, M_c):
         for row in group.pulling:
             force = row.n * M_c * row.y / group.S_2
-            forces[row.index] = trace.step(f"F_{row.index + 1}", force, "kN", METHOD)
-        return Spread(forces, compression(group, forces, trace), zero)
+            forces[row.index] = trace.step(f"F_{row.index + 1}{mark}", force, "kN", METHOD)
+        return Spread(forces, compression(group, forces, mark, trace), zero)
     opened = _open_rows(group, lambda _rows: float(M_c), trace)
     for row in opened.rows:
         force = row.n * opened.bolt_force(row.y, M_c, group.N)
-        forces[row.index] = trace.step(f"F_{row.index + 1}", force, "kN", OPEN)
+        forces[row.index] = trace.step(f"F_{row.index + 1}{mark}", force, "kN", OPEN)
     return Spread(forces, zero, zero)
 
 
-def compression(group: Group, forces: dict[int, Quantity], trace: Trace) -> Quantity:
+def compression(group: Group, forces: dict[int, Quantity], mark: str, trace: Trace) -> Quantity:
     """Record C = ΣF − N."""
     pull = total([force for force in forces.values() if float(force) > 0] or [trace.constant("0", 0.0)])
-    return trace.step("C", pull - group.N if float(group.N) else pull, "kN", f"{STATICS}, C = ΣF − N")
+    return trace.step(f"C{mark}", pull - group.N if float(group.N) else pull, "kN", f"{STATICS}, C = ΣF − N")
 
 
 def linear_limit(group: Group, trace: Trace) -> tuple[Quantity, str]:

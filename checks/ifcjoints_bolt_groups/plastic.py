@@ -65,7 +65,8 @@ from .brittleness import why_brittle
 from .elastic import linear_use, nil_resistance
 from .filling import METHOD, Limit, plastic_limit, plastic_spread
 from .flange import interface_of
-from .group import STATICS, Group, Loads, Spread, given_loads, group_of
+from .group import Group, Spread, group_of
+from .loads import STATICS, Loads, given_loads
 from .use import Ratios, beyond_alone, flanges_pressed, governing
 
 
@@ -100,10 +101,8 @@ def plastic(subject: Subject, trace: Trace) -> Verdict:
     if subject.action is None and limit is not None:
         spread, governs = limit.spread, limit.stop
     else:
-        spread, ratios = use_at(beside, loads, (M_Rd, limit), brittle, trace) or linear_answer(
-            group, bolt, loads, trace
-        )
-        ratios |= {"bolt shear": trace.step("η_v", loads.F_v / bolt.shear, "", bolt.clause)} if loads.V > 0 else {}
+        plainly = use_at(beside, bolt, loads, (M_Rd, limit), brittle, trace) if limit else None
+        spread, ratios = plainly or linear_answer(group, bolt, loads, trace)
         utilisation, governs = governing(ratios)
     return Verdict(
         resistance={"M_kNm": float(M_Rd) / 1e6} | resistance,
@@ -133,15 +132,13 @@ def moment_resistance(group: Group, brittle: str, mark: str, trace: Trace) -> tu
 
 
 def use_at(
-    group: Group, loads: Loads, resistance: tuple[Quantity, Limit | None], brittle: str, trace: Trace
+    group: Group, bolt: BoltResistance, loads: Loads, resistance: tuple[Quantity, Limit], brittle: str, trace: Trace
 ) -> tuple[Spread, Ratios] | None:
     """Return the forces at the action, or those at the resistance where it is exceeded, and the ratios.
 
-    None where the resistance is nil, so that nothing can be put in relation to it.
+    None where nothing balances the action and no resistance can be put in relation to it.
     """
     M_Rd, limit = resistance
-    if limit is None:
-        return None
     M_cEd = trace.step("M_c,Ed", group.about_flange(loads.M), "kNm", STATICS)
     spread = plastic_spread(group, M_cEd, brittle, ",Ed", trace)
     if spread is None and not 0 < float(M_Rd) < float(loads.M):
@@ -149,6 +146,8 @@ def use_at(
     ratios = {} if spread is None else flanges_pressed(spread, group, trace)
     if float(loads.N) > 0:
         ratios["axial tension"] = trace.step("η_N", loads.N / (group.count * group.tension), "", STATICS)
+    if float(loads.V) > 0:
+        ratios["bolt shear"] = trace.step("η_v", loads.F_v / bolt.shear, "", bolt.shear_clause)
     if float(M_Rd) > 0:
         ratios[limit.stop] = trace.step("η", loads.M / M_Rd, "", METHOD)
     return spread or limit.spread, ratios

@@ -5,7 +5,8 @@ from __future__ import annotations
 from ifcjoints.checking import Quantity, Trace
 
 from .bolt import BoltResistance
-from .group import STATICS, BoltRow, Group, Spread
+from .group import BoltRow, Group, Spread
+from .loads import STATICS
 
 Ratios = dict[str, Quantity]
 
@@ -30,7 +31,7 @@ def flanges_pressed(spread: Spread, group: Group, trace: Trace) -> Ratios:
 
 def shear_and_both(spread: Spread, group: Group, bolt: BoltResistance, F_vEd: Quantity, trace: Trace) -> Ratios:
     """Return the ratios of a bolt in shear, and of the most loaded one in shear and tension together."""
-    ratios = {"bolt shear": trace.step("η_v", F_vEd / bolt.shear, "", bolt.clause)}
+    ratios = {"bolt shear": trace.step("η_v", F_vEd / bolt.shear, "", bolt.shear_clause)}
     worst, F_tEd = most_loaded(spread, group)
     if float(F_tEd) > 0:
         together = trace.step("η_tv", bolt.interaction(F_tEd, F_vEd), "", bolt.clause)

@@ -34,6 +34,7 @@ def plain_joint(
     gauge: Mm = 110.0,
     flange_distance: Mm = 390.0,
     axis: Mm | None = None,
+    slope: float = 0.0,
     flange: tuple[Mm, Mm] = (180.0, 13.5),
     flange_grade: str | None = "S355",
     inclinations: tuple[float, float] = (0.0, 0.0),
@@ -46,7 +47,8 @@ def plain_joint(
     `rows` are (y from the bottom flange's centre line, bolts), top to bottom, their bolts two by two about the web
     with this `gauge`; `flange` is (width, thickness) of both flanges, `inclinations` the bottom and the top
     flange's angle in degrees; `axis` where the member's axis meets the interface (y; by default half-way between
-    the flanges); `bolt` (diameter, grade). Lengths in mm.
+    the flanges), `slope` the degrees by which it rises from the interface's normal; `bolt` (diameter, grade).
+    Lengths in mm.
     """
     given = Provenance(source="given", detail="plain figures")
     width, thickness = flange
@@ -76,7 +78,7 @@ def plain_joint(
         interface=Interface(
             origin_mm=(0.0, 0.0, 0.0), normal=(1.0, 0.0, 0.0), up=(0.0, 0.0, 1.0), across=(0.0, -1.0, 0.0),
             flange_distance_mm=flange_distance, axis_y_mm=flange_distance / 2 if axis is None else axis,
-            bottom=flanges[0], top=flanges[1],
+            member_slope_deg=slope, bottom=flanges[0], top=flanges[1],
         ),
         completeness=1.0,
         provenance=dict.fromkeys(PLAIN_FIGURES, given),

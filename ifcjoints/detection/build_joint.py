@@ -209,6 +209,7 @@ def _interface(
         across=_vector(frame.axes[0], 12),
         flange_distance_mm=mm(top.y - bottom.y),
         axis_y_mm=mm(-bottom.y),
+        member_slope_deg=mm(connection.slope_deg),
         top=told[1],
         bottom=told[0],
     )

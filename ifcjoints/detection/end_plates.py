@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Sequence
 from dataclasses import dataclass, replace
 
@@ -44,6 +45,12 @@ class EndConnection:
     def at_start(self) -> bool:
         """Whether it is the member's start that stands on the plate."""
         return bool(self.frame.axes[2] @ self.shape.axis > 0)
+
+    @property
+    def slope_deg(self) -> float:
+        """The angle by which the member rises from the plane's normal towards y as it leaves the plate."""
+        away = self.shape.axis if self.at_start else -self.shape.axis
+        return math.degrees(math.atan2(float(self.frame.axes[1] @ away), float(self.frame.axes[2] @ away)))
 
 
 def end_connections(group: BoltGroup, parts: Sequence[Part], index: PartIndex, gap: Mm) -> list[EndConnection]:

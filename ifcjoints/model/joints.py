@@ -124,7 +124,8 @@ class Interface(Frozen):
 
     `origin_mm` lies on the bottom flange's centre line in the middle of the web; `normal` points into
     the supported member, `up` from the bottom flange to the top one, `across` = up × normal.
-    `axis_y_mm` is where the member's centroidal axis meets the plane (y from the bottom flange).
+    `axis_y_mm` is where the member's centroidal axis meets the plane (y from the bottom flange);
+    `member_slope_deg` is the angle by which that axis rises from `normal` towards `up` as it leaves the joint.
     """
 
     origin_mm: Vector
@@ -133,6 +134,7 @@ class Interface(Frozen):
     across: Vector
     flange_distance_mm: Mm
     axis_y_mm: Mm
+    member_slope_deg: Degrees = 0.0
     top: Flange
     bottom: Flange
 

@@ -49,7 +49,12 @@ def mirrored(joint):
     ]
     face = joint.interface
     turned = face.model_copy(
-        update={"top": face.bottom, "bottom": face.top, "axis_y_mm": face.flange_distance_mm - face.axis_y_mm}
+        update={
+            "top": face.bottom,
+            "bottom": face.top,
+            "axis_y_mm": face.flange_distance_mm - face.axis_y_mm,
+            "member_slope_deg": -face.member_slope_deg,
+        }
     )
     return joint.model_copy(update={"rows": tuple(rows), "interface": turned})
 

@@ -71,10 +71,12 @@ def test_a_triangle_never_raises_the_resistance(joint, acting):
 
 
 @both
-@given(joint=joints(), acting=forces)
-def test_a_mirrored_joint_has_its_directions_exchanged(method, joint, acting):
+@given(joint=joints(), acting=forces, slope=st.sampled_from([0.0, 9.0, -15.0]))
+def test_a_mirrored_joint_has_its_directions_exchanged(method, joint, acting, slope):
     N, V, M = acting
-    here, there = answer(method, joint, acting), answer(method, mirrored(joint), (N, V, -M))
+    face = joint.interface.model_copy(update={"member_slope_deg": slope})
+    joint = joint.model_copy(update={"interface": face})
+    here, there = answer(method, joint, acting), answer(method, mirrored(joint), (N, -V, -M))
     assert there.status == here.status
     assert there.resistance == pytest.approx(here.resistance)
     assert there.row_forces_kN[::-1] == pytest.approx(here.row_forces_kN, abs=1e-6)

@@ -44,3 +44,12 @@ def test_a_model_laid_on_its_back_keeps_its_forces():
     upside_down = forces_of(turned(180.0, about=(1, 0, 0)), 1.0, 0.0)
     for check in ("bolt_group.elastic", "bolt_group.plastic"):
         assert upside_down[check, "bottom"][::-1] == pytest.approx(plain[check, "top"], rel=1e-6)
+
+
+@pytest.mark.parametrize("slope", [0.0, 7.0, -12.0])
+@pytest.mark.parametrize("degrees", [0.0, 130.0])
+def test_the_member_s_slope_is_told_with_its_sign(slope, degrees):
+    model = Model(world=turned(degrees))
+    EndPlate(slope=slope).build(model)
+    (joint,) = audit(model.file, settings=STEEL).joints
+    assert joint.interface.member_slope_deg == pytest.approx(slope, abs=1e-3)
