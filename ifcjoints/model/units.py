@@ -9,6 +9,8 @@ import numpy.typing as npt
 
 Mm: TypeAlias = float
 Mm2: TypeAlias = float
+Mm3: TypeAlias = float
+Mm4: TypeAlias = float
 Degrees: TypeAlias = float
 Newton: TypeAlias = float
 KiloNewton: TypeAlias = float

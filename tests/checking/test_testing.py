@@ -1,75 +1,73 @@
-"""The kit that packs are tested with raises when a case does not end as it should."""
+"""The runner of a check's cases, and the joints from plain figures that packs build theirs of."""
 
 from dataclasses import replace
 
 import pytest
 
 from ifcjoints.checking import NotCheckable, Verdict
-from ifcjoints.checking.testing import (
-    Case,
-    case_parameters,
-    example_cases,
-    plain_joint,
-    plain_subject,
-    run_case,
-    run_cases,
-)
+from ifcjoints.checking.contract import HEADINGS, Case, Check
+from ifcjoints.checking.testing import case_parameters, example_cases, plain_joint, plain_subject, run_cases
 from ifcjoints.model.base import Frozen
 
-from .made import made
+
+def within_100_kNm(subject, trace):
+    """Stand for a check that knows one figure."""
+    if subject.joint.bolts.grade is None:
+        raise NotCheckable("the bolts' grade is not known.")
+    return Verdict({"M_kNm": 100.0}, "the one figure", abs(subject.action.forces.M_kNm) / 100.0)
 
 
-class Limits(Frozen):
-    limit: float = 0.5
+CHECK = Check("made.check", "Made", "clause", within_100_kNm, dict.fromkeys(HEADINGS, "."), example_cases(), Frozen)
 
 
-def told(subject, trace):
-    return Verdict({}, "", subject.options.limit)
+def test_all_cases_are_run():
+    assert [result.status for result in run_cases(CHECK)] == ["pass", "fail", "not_checkable"]
 
 
-def lacking(subject, trace):
-    raise NotCheckable("the bolts' diameter is not known.")
+@pytest.mark.parametrize(
+    ("case", "told"),
+    [
+        (Case("light", plain_subject(plain_joint(), (0, 0, 60)), "fail"), '"light": ended as pass, not fail'),
+        (Case("heavy", plain_subject(plain_joint(), (0, 0, 600)), "pass"), "ended as fail, not pass"),
+        (
+            Case("odd", plain_subject(plain_joint(bolt=(24.0, None))), "not_checkable", missing="diameter"),
+            "the reason does not name diameter",
+        ),
+    ],
+)
+def test_a_case_that_ends_otherwise_is_told(case, told):
+    with pytest.raises(AssertionError, match=told):
+        run_cases(replace(CHECK, cases=(*CHECK.cases, case)))
 
 
-@pytest.mark.parametrize("expect", ["fail", "not_checkable"])
-def test_a_case_that_ends_otherwise_is_told(monkeypatch, expect):
-    case = Case("a light moment", plain_subject(plain_joint()), expect)
-    with pytest.raises(AssertionError, match=f'made.check, "a light moment": ended as pass, not {expect}'):
-        run_case(made(monkeypatch), case)
+@pytest.mark.parametrize(**case_parameters(CHECK))
+def test_cases_are_handed_to_pytest_one_by_one(case):
+    assert case in CHECK.cases
 
 
-def test_a_reason_that_does_not_name_what_is_missing_is_told(monkeypatch):
-    built, subject = made(monkeypatch, function=lacking), plain_subject(plain_joint())
-    assert run_case(built, Case("x", subject, "not_checkable", missing="diameter")).status == "not_checkable"
-    with pytest.raises(AssertionError, match="does not name grade"):
-        run_case(built, Case("x", subject, "not_checkable", missing="grade"))
+def test_they_go_by_their_titles():
+    assert case_parameters(CHECK)["ids"] == [case.title for case in example_cases()]
 
 
-def test_a_case_takes_the_check_s_own_options_unless_it_brings_some(monkeypatch):
-    built, subject = made(monkeypatch, function=told, options=Limits), plain_subject(plain_joint())
-    assert run_case(built, Case("defaults", subject, "pass")).utilisation == 0.5
-    assert run_case(built, Case("own", replace(subject, options=Limits(limit=1.5)), "fail")).utilisation == 1.5
+def test_a_plain_joint_has_the_figures_it_was_given():
+    joint = plain_joint(
+        ((450.0, 2), (340.0, 4), (-60.0, 2)), gauge=90.0, flange_distance=400.0, axis=150.0, slope=5.0,
+        flange=(170.0, 12.0), inclinations=(3.0, 4.0), bolt=(20.0, "10.9"), plate_thickness=25.0,
+    )  # fmt: skip
+    assert [(row.y_bottom_mm, row.y_top_mm, row.count, row.gauge_mm, row.position) for row in joint.rows] == [
+        (450.0, -50.0, 2, 90.0, "outside_top"),
+        (340.0, 60.0, 4, 90.0, "between"),
+        (-60.0, 460.0, 2, 90.0, "outside_bottom"),
+    ]
+    face = joint.interface
+    assert (face.flange_distance_mm, face.axis_y_mm, face.member_slope_deg) == (400.0, 150.0, 5.0)
+    assert (face.bottom.inclination_deg, face.top.inclination_deg) == (3.0, 4.0)
+    assert (face.top.width_mm, face.top.thickness_mm) == (170.0, 12.0)
+    assert (joint.bolts.count, joint.bolts.diameter_mm, joint.bolts.grade) == (8, 20.0, "10.9")
+    assert joint.plates[0].thickness_mm == 25.0
 
 
-def test_all_cases_are_run_and_the_first_that_ends_otherwise_is_named(monkeypatch):
-    with pytest.raises(AssertionError, match=example_cases()[1].title):
-        run_cases(made(monkeypatch))
-
-
-def test_every_case_becomes_a_test_of_its_own(monkeypatch):
-    parameters = case_parameters(made(monkeypatch))
-    assert parameters["ids"] == [case.title for case in example_cases()]
-    assert len(parameters["argvalues"]) == 3
-
-
-def test_a_plain_joint_s_rows_are_told_from_both_flanges():
-    """By hand: flanges 300 mm apart, rows 40 mm above the top one, 60 mm below it and 50 mm under the bottom one."""
-    joint = plain_joint(((340.0, 2), (240.0, 4), (-50.0, 2)), flange_distance=300.0)
-    assert [row.y_top_mm for row in joint.rows] == [-40.0, 60.0, 350.0]
-    assert [row.position for row in joint.rows] == ["outside_top", "between", "outside_bottom"]
-    assert joint.bolts.count == 8
-
-
-@pytest.mark.parametrize(("moment", "flange"), [(5.0, "top"), (-5.0, "bottom")])
-def test_a_plain_subject_s_moment_decides_the_tension_flange(moment, flange):
-    assert plain_subject(plain_joint(), (0.0, 0.0, moment)).tension_flange == flange
+def test_the_moment_tells_the_tension_flange():
+    assert plain_subject(plain_joint(), (0, 0, 5)).tension_flange == "top"
+    assert plain_subject(plain_joint(), (0, 0, -5)).tension_flange == "bottom"
+    assert plain_subject(plain_joint(), tension_flange="bottom").action is None

@@ -8,7 +8,7 @@ import pytest
 from sectionproperties.analysis import Section
 from sectionproperties.pre.library import i_section
 
-from ifcjoints.model.section_properties import area, plastic_modulus
+from ifcjoints.model.section_properties import area, plastic_modulus, second_moment
 
 SECTIONS = [
     ("IPE 200", (200, 100, 5.6, 8.5, 12), 220.6),
@@ -42,3 +42,26 @@ def test_against_a_finite_element_section(size):
     section.calculate_plastic_properties()
     assert area(*size) == pytest.approx(section.get_area(), rel=1e-3)
     assert plastic_modulus(*size) == pytest.approx(section.get_s()[0], rel=1e-3)
+    assert second_moment(*size) == pytest.approx(section.get_ic()[0], rel=1e-3)
+
+
+UK_SECTIONS = [
+    ("533x210x92 UKB", (533.1, 209.3, 10.1, 15.6, 12.7), 2360),
+    ("254x254x107 UKC", (266.7, 258.8, 12.8, 20.5, 12.7), 1480),
+    ("457x191x67 UKB", (453.4, 189.9, 8.5, 12.7, 10.2), 1470),
+    ("305x305x97 UKC", (307.9, 305.3, 9.9, 15.4, 15.2), 1590),
+    ("203x203x46 UKC", (203.2, 203.6, 7.2, 11, 10.2), 497),
+]
+
+
+@pytest.mark.parametrize(("name", "size", "modulus"), UK_SECTIONS, ids=[each[0] for each in UK_SECTIONS])
+def test_plastic_modulus_of_uk_sections(name, size, modulus):
+    """W_pl in cm³ to three digits (from memory); 254x254x107's area 136.4 cm² as printed in SCI P398, Example C.1."""
+    assert plastic_modulus(*size) / 1e3 == pytest.approx(modulus, rel=5e-3)
+    if name.startswith("254"):
+        assert area(*size) == pytest.approx(13640, rel=1e-3)
+
+
+def test_second_moment_of_ipe_500():
+    """48 200 cm⁴, as used in Single-Storey Steel Buildings, Part 11, Table 4.23 (seen in print)."""
+    assert second_moment(500, 200, 10.2, 16, 21) == pytest.approx(48200e4, rel=1e-3)
