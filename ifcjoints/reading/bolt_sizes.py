@@ -5,6 +5,7 @@ from __future__ import annotations
 import re
 from collections.abc import Iterable
 from dataclasses import dataclass, replace
+from functools import cache
 
 from ..model.joints import Provenance
 from ..model.units import Mm
@@ -151,6 +152,7 @@ def sizes_in_texts(texts: Texts) -> tuple[list[StatedSize], list[StatedSize]]:
     return diameters, lengths
 
 
+@cache
 def _sizes(text: str) -> tuple[Mm | None, Mm | None]:
     metric = METRIC.search(text)
     if metric:

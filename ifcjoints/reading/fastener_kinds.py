@@ -3,9 +3,8 @@
 from __future__ import annotations
 
 import re
+from functools import cache
 from typing import Any
-
-import ifcopenshell.util.element as element_util
 
 from ..model.parts import BoltKind
 
@@ -44,19 +43,25 @@ def texts_of(element: Any, owner: Any) -> Texts:
     return found
 
 
-def kind_of(element: Any, texts: Texts) -> tuple[BoltKind, str]:
+def kind_of(element: Any, owner: Any, texts: Texts) -> tuple[BoltKind, str]:
     """Tell bolts from anchors, studs and the rest, and why: by predefined type, then by what the texts say."""
-    predefined = element_util.get_predefined_type(element)
-    if predefined in PREDEFINED:
-        return PREDEFINED[predefined], f"predefined type {predefined}"
-    schema_kind = getattr(element, "PredefinedType", None)
-    if schema_kind not in UNDEFINED:
-        return "other", f"predefined type {schema_kind}"
+    for each in (element, owner):
+        predefined = getattr(each, "PredefinedType", None)
+        if predefined not in UNDEFINED:
+            return PREDEFINED.get(predefined, "other"), f"predefined type {predefined}"
     for text, origin in texts:
-        for kind, words in NO_BOLT_WORDS:
-            if re.search(words, text, re.IGNORECASE) and not _is_structural_screw(words, text):
-                return kind, f'{origin} "{text.strip()}"'
+        kind = _kind_in(text)
+        if kind is not None:
+            return kind, f'{origin} "{text.strip()}"'
     return "bolt", "no other kind named"
+
+
+@cache
+def _kind_in(text: str) -> BoltKind | None:
+    for kind, words in NO_BOLT_WORDS:
+        if re.search(words, text, re.IGNORECASE) and not _is_structural_screw(words, text):
+            return kind
+    return None
 
 
 def _is_structural_screw(words: str, text: str) -> bool:

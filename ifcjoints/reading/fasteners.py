@@ -47,7 +47,7 @@ class FastenerReader:
         """Return the bolts of one element: as many as its body shows, or one where it has none."""
         owner = element_util.get_type(element)
         texts = texts_of(element, owner)
-        kind = kind_of(element, texts)
+        kind = kind_of(element, owner, texts)
         bolts, loose = self._measured(element)
         if loose and kind[0] == "bolt":
             kind = "loose_part", "its body is a nut or a washer"
@@ -133,16 +133,11 @@ class FastenerReader:
 
     def _grade(self, element: Any, texts: Texts) -> tuple[str | None, Provenance | None]:
         """Return the designation of the first text that names a known grade, else the grade stated, whatever it is."""
-        materials = [(material.Name, "material") for material in element_util.get_materials(element) if material.Name]
         stated = [(str(each.value), each.origin) for each in self._properties.stated(element, "bolt_grade")]
         standards = [(str(each.value), each.origin) for each in self._properties.stated(element, "bolt_standard")]
-        named = [
-            (grade.name, origin, text.strip())
-            for text, origin in (*stated, *standards, *texts, *materials)
-            if (grade := bolt_grade(text)) is not None
-        ]
+        named = _known_grades([*stated, *standards, *texts])
         if not named:
-            named = [(text, origin, text) for text, origin in stated[:1]]
+            named = [(text, origin, text) for text, origin in stated[:1]] or _known_grades(_materials(element))
         if not named:
             return None, None
         name, origin, text = named[0]
@@ -168,3 +163,13 @@ class FastenerReader:
             return None, None
         matrix = self._bodies.world_of(element)
         return matrix[:3, 3], matrix[:3, 2]
+
+
+def _known_grades(texts: Texts) -> list[tuple[str, str, str]]:
+    """Return the designations of the grades that texts name, each with where it stands and the whole text."""
+    found = [(bolt_grade(text), origin, text.strip()) for text, origin in texts]
+    return [(grade.name, origin, text) for grade, origin, text in found if grade is not None]
+
+
+def _materials(element: Any) -> Texts:
+    return [(material.Name, "material") for material in element_util.get_materials(element) if material.Name]

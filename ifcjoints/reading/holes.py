@@ -20,6 +20,9 @@ WIDEST_HOLE: Mm = 60.0
 ROUNDNESS = 0.05
 """The distances of a round hole's corners from its centre differ by less than this share."""
 
+EVEN = 0.002
+"""About their mean the corners of a regular polygon differ by no more than this (rounding in the file)."""
+
 PENTAGON = 0.8
 """A round hole's sides lie at least this share of its radius out (a pentagon's at 0.809, a square's at 0.707)."""
 
@@ -68,19 +71,30 @@ def hole_from_opening(placed: PlacedPiece) -> Hole | None:
 
 def _drilled(ring: Array, frame: Frame) -> Hole | None:
     """Return a ring (k, 2) of a plane as a round hole or a slot; None for a cut-out of any other form."""
+    circle = _round(ring, ring.mean(axis=0), frame, EVEN)
+    if circle is not None:
+        return circle
     ring = _corners(ring)
     outline = shapely.Polygon(ring)
-    circle = shapely.minimum_bounding_circle(outline).centroid
-    middle = np.array([circle.x, circle.y])
-    radii = np.linalg.norm(ring - middle, axis=1)
-    if len(ring) >= 5 and np.ptp(radii) < ROUNDNESS * radii.max():
-        return _no_wider(Hole(frame.to_world(middle), frame.axes[2], 2 * float(radii.max())))
+    centre = shapely.minimum_bounding_circle(outline).centroid
+    circle = _round(ring, np.array([centre.x, centre.y]), frame, ROUNDNESS)
+    if circle is not None:
+        return circle
     box = np.array(shapely.oriented_envelope(outline).exterior.coords)
     width, length = np.sort(np.linalg.norm(np.diff(box[:3], axis=0), axis=1)).tolist()
     slot_area = width * (length - width) + np.pi / 4 * width**2
     if abs(outline.area - slot_area) > SLOT_AREA * width**2:
         return None
     return _no_wider(Hole(frame.to_world(box[:4].mean(axis=0)), frame.axes[2], width, length - width))
+
+
+def _round(ring: Array, middle: Array, frame: Frame, share: float) -> Hole | None:
+    """Return a ring as a round hole about a middle, or None if its corners do not lie alike about it."""
+    radii = np.hypot(*(ring - middle).T)
+    widest = float(radii.max())
+    if len(ring) < 5 or widest - radii.min() > share * widest:
+        return None
+    return _no_wider(Hole(frame.to_world(middle), frame.axes[2], 2 * widest))
 
 
 def _corners(ring: Array) -> Array:
@@ -97,27 +111,28 @@ def _no_wider(hole: Hole) -> Hole | None:
 
 def _through(rims: list[Hole]) -> list[Hole]:
     """Join the two rims of each hole: those on one axis that are nearest to one another."""
+    if not rims:
+        return []
+    centres, directions = np.array([rim.centre for rim in rims]), np.array([rim.direction for rim in rims])
+    sizes = np.array([(rim.diameter, rim.slot) for rim in rims])
+    free = np.ones(len(rims), bool)
     holes = []
-    left = list(rims)
-    while left:
-        rim = left.pop(0)
-        other = min((each for each in left if _in_line(rim, each)), key=lambda each: _apart(rim, each), default=None)
-        if other is not None:
-            left = [each for each in left if each is not other]
-            rim = Hole((rim.centre + other.centre) / 2, rim.direction, rim.diameter, rim.slot)
-        holes.append(rim)
+    for number, rim in enumerate(rims):
+        if not free[number]:
+            continue
+        free[number] = False
+        away = centres - rim.centre
+        along = away @ rim.direction
+        off = (away * away).sum(axis=1) - along * along
+        other = free & (off < IN_LINE**2) & (np.abs(directions @ rim.direction) > 0.999)
+        other &= np.abs(sizes - sizes[number]).max(axis=1) < IN_LINE
+        centre = rim.centre
+        if other.any():
+            nearest = int(np.argmin(np.where(other, np.abs(along), np.inf)))
+            free[nearest] = False
+            centre = (centre + centres[nearest]) / 2
+        holes.append(Hole(centre, rim.direction, rim.diameter, rim.slot))
     return holes
-
-
-def _in_line(rim: Hole, other: Hole) -> bool:
-    away = other.centre - rim.centre
-    off = np.linalg.norm(away - (away @ rim.direction) * rim.direction)
-    sizes = max(abs(rim.diameter - other.diameter), abs(rim.slot - other.slot))
-    return bool(abs(rim.direction @ other.direction) > 0.999 and off < IN_LINE and sizes < IN_LINE)
-
-
-def _apart(rim: Hole, other: Hole) -> Mm:
-    return float(np.linalg.norm(other.centre - rim.centre))
 
 
 def _ends(solid: Solid) -> Iterator[Hole]:

@@ -9,7 +9,7 @@ from sample_models.making import Model
 def kind(schema="IFC4", **attributes):
     model = Model(schema)
     element = model.rooted("IfcMechanicalFastener", **attributes)
-    return kind_of(element, texts_of(element, None))
+    return kind_of(element, None, texts_of(element, None))
 
 
 @pytest.mark.parametrize(
