@@ -1,6 +1,8 @@
 """Grades as models write them, and look-alikes that are none."""
 
 import pytest
+from hypothesis import given
+from hypothesis import strategies as st
 
 from ifcjoints.model.basis import EDITIONS
 from ifcjoints.tables.bolts import UNIT_NOISE, _sizes, bolt_grade, bolt_size, tensile_stress_area
@@ -15,7 +17,7 @@ from ifcjoints.tables.steels import steel_grade
         ("A325-X", "A325X"), ("A325SC", "A325SC"), ("A490", "A490"),
         ("D=3/4 L=2 1/4 Site A325N", "A325N"), ("A325M", "A325"),
         ("F1852 TC", "F1852"), ("F2280M-X", "F2280X"), ("Group 144-N", "Group 144N"), ("A490X", "A490X"),
-        ("M24 10.9HV", "10.9"),
+        ("M24 10.9HV", "10.9"), ("D=3/4 L=2 A490-X", "A490X"), ("M20x60 10.9", "10.9"),
     ],
 )  # fmt: skip
 def test_bolt_grades(text, name):
@@ -74,6 +76,16 @@ def test_american_grades(text, ksi):
 )
 def test_what_is_no_steel_grade(text):
     assert steel_grade(text, 10.0) is None
+
+
+@given(
+    st.sampled_from(sorted({row["name"] for row in rows_of("steel_grades.csv")})),
+    st.tuples(st.floats(1.0, 150.0), st.floats(1.0, 150.0)).map(sorted),
+)
+def test_a_thicker_plate_is_never_stronger(name, thicknesses):
+    """Yield strength falls with thickness in every product standard, and past the table there is none."""
+    thin, thick = (steel_grade(name, thickness) for thickness in thicknesses)
+    assert thick is None or (thin is not None and thin.f_y >= thick.f_y and thin.f_y < thin.f_u)
 
 
 def test_a_plate_thicker_than_the_table_has_no_strength():
