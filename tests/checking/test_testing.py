@@ -6,7 +6,7 @@ import pytest
 
 from ifcjoints.checking import NotCheckable, Verdict
 from ifcjoints.checking.contract import HEADINGS, Case, Check
-from ifcjoints.checking.testing import case_parameters, example_cases, plain_joint, plain_subject, run_cases
+from ifcjoints.checking.testing import case_parameters, example_cases, plain_joint, plain_subject, run_case, run_cases
 from ifcjoints.model.base import Frozen
 
 
@@ -38,6 +38,19 @@ def test_all_cases_are_run():
 def test_a_case_that_ends_otherwise_is_told(case, told):
     with pytest.raises(AssertionError, match=told):
         run_cases(replace(CHECK, cases=(*CHECK.cases, case)))
+
+
+class Limits(Frozen):
+    limit: float = 0.5
+
+
+def test_a_case_takes_the_check_s_own_options_unless_it_brings_some():
+    def limited(subject, trace):
+        return Verdict({}, "", subject.options.limit)
+
+    limiting, subject = replace(CHECK, function=limited, options=Limits), plain_subject(plain_joint())
+    assert run_case(limiting, Case("defaults", subject, "pass")).utilisation == 0.5
+    assert run_case(limiting, Case("own", replace(subject, options=Limits(limit=1.5)), "fail")).utilisation == 1.5
 
 
 @pytest.mark.parametrize(**case_parameters(CHECK))
