@@ -40,6 +40,32 @@ def read_units(file: Any) -> Units:
     return Units(metres * 1000.0, radians or 1.0)
 
 
+def read_factor(file: Any, unit_type: str) -> float | None:
+    """How many SI units make one of the project's units of a type, named or derived; None if it states none.
+
+    Raises ModelError for a unit whose size does not say.
+    """
+    for unit in _assigned(file):
+        if unit is not None and getattr(unit, "UnitType", None) == unit_type:
+            factor = _derived_factor(unit) if unit.is_a("IfcDerivedUnit") else _factor(unit)
+            if factor is None or not (math.isfinite(factor) and factor > 0):
+                raise ModelError(f"the {unit_type} cannot be told; state it as an SI unit or with a conversion.")
+            return factor
+    return None
+
+
+def _derived_factor(derived: Any) -> float | None:
+    factor = 1.0
+    for element in derived.Elements:
+        inner = _factor(element.Unit)
+        if inner is None:
+            return None
+        # The SI's unit of mass is the kilogram, the schema's the gram.
+        grams = element.Unit.is_a("IfcSIUnit") and element.Unit.Name == "GRAM"
+        factor *= (inner / 1000.0 if grams else inner) ** element.Exponent
+    return factor
+
+
 def _assigned(file: Any) -> Iterator[Any]:
     """Yield the units of the project's own assignment first: a file may hold other assignments."""
     projects = [project.UnitsInContext for project in file.by_type("IfcProject")]
