@@ -7,7 +7,7 @@ from importlib.metadata import version
 from pathlib import Path
 from typing import Any
 
-from .actions.analysis import read_analysis
+from .actions.analysis import is_analysis, read_analysis
 from .actions.analysis_matching import match_analysis
 from .actions.matching import MatchedActions, match_actions
 from .actions.table import read_actions
@@ -80,8 +80,8 @@ def _acting(
     if actions is None:
         return MatchedActions({}, ())
     path = Path(actions)
-    if path.suffix.lower() in (".ifc", ".ifczip"):
-        return match_analysis(read_analysis(open_model(path), path), joints, settings.actions)
+    if is_analysis(path):
+        return match_analysis(read_analysis(path, settings.actions.section_forces), joints, settings)
     return match_actions(read_actions(path), contents.names, joints)
 
 

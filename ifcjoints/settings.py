@@ -135,11 +135,19 @@ class ReadingSettings(Frozen):
 
 
 class ActionsSettings(Frozen):
-    """How member ends of an analysis model are matched to joints, in mm and degrees."""
+    """How member ends of an analysis model are matched to joints, in mm and degrees, and how its signs are read."""
 
-    node_distance_mm: Mm = Field(default=600.0, gt=0, description="farthest an analysis node is from its interface")
-    axis_tolerance_deg: Degrees = Field(default=35.0, gt=0, lt=90, description="member's axis against the normal")
-    alike_mm: Mm = Field(default=1.0, ge=0, description="two members' ends this equally near are not told apart")
+    node_distance_mm: Mm = Field(
+        default=600.0, gt=0, description="farthest an analysis node is from its interface, along the member"
+    )
+    aside_mm: Mm = Field(default=250.0, gt=0, description="farthest an analysis axis runs beside the member's")
+    axis_tolerance_deg: Degrees = Field(default=5.0, gt=0, lt=90, description="analysis axis against the member's")
+    alike_mm: Mm = Field(default=50.0, ge=0, description="two members' ends this equally near are not told apart")
+    section_forces: Literal["shown", "towards_end"] = Field(
+        default="shown",
+        description="signs of forces along a member: only as the file's support reactions show them, or, where they "
+        "show nothing, acting on the face that looks towards the member's end, moments right-handed",
+    )
 
 
 class Settings(Frozen):

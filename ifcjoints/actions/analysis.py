@@ -1,213 +1,208 @@
-"""Design actions from a structural analysis model with results in IFC.
+"""Design actions from a structural analysis model with results, in an IFC file.
 
-Two kinds of results on an ``IfcStructuralCurveMember`` are read, each for the load case or combination of its result
-group:
+What is read, and as what:
 
-- ``IfcStructuralCurveReaction`` with a load configuration: stress resultants along the member, as the components that
-  act on the face whose outward normal points from the member's start to its end (so that Fx > 0 is tension);
-- ``IfcStructuralPointReaction`` at one of its ends: what the support or joint exerts on the member there.
+- a point reaction on a curve member, at one of its ends: the action of the rest of the structure on the member;
+- a point reaction on a connection (a support): the action of the support on the structure, and so on the member's
+  end, where the connection joins that member alone and no action stands on the connection itself;
+- a curve reaction that samples single forces at a member's ends: forces inside the member or actions on its ends,
+  signed as the file's own support reactions show (see :mod:`.analysis_signs`); without such a witness not used,
+  unless the settings say how they are signed.
 
-Local components are along the member's x (start to end), z as the member's Axis says, y = z × x. What cannot be told
-for certain is left out and listed. The convention of the first kind is from memory of the schema's documentation;
-a note of every run says which was read.
+All three are forces at the end of the member's axis. They are taken as they stand there: nothing is moved to the
+face of the support, combined, or multiplied by factors. What cannot be told for certain keeps a `doubt`.
 """
 
 from __future__ import annotations
 
-from collections import defaultdict
-from collections.abc import Iterator
-from dataclasses import dataclass
+import math
+from collections.abc import Iterable, Iterator
+from dataclasses import replace
 from pathlib import Path
-from typing import Any
+from typing import Any, Literal
 
-import ifcopenshell.util.unit as unit_util
 import numpy as np
 
-from ..model.geometry import cross, unit
-from ..model.units import Array, Mm
-from ..reading.placements import Placements
-from ..reading.units import read_units
+from ..errors import ActionsError
+from ..model.geometry import unit
+from ..model.joints import MemberEnd
+from ..model.units import Array
+from ..reading.open_model import checked, open_model
+from .analysis_ends import EndForces
+from .analysis_model import SAME_PLACE, Reaction, StructuralMember, StructuralModel
+from .analysis_reading import StructuralReader
+from .analysis_signs import (
+    ENDS,
+    NEGLIGIBLE,
+    SAME,
+    TOWARDS_END,
+    Signs,
+    agreed,
+    compare,
+    learn_signs,
+    or_else,
+    six,
+    supports,
+)
 
-AT_END = 0.01
-"""A result this near to an end, as a share of the member's length, is the end's."""
+UNSIGNED = (
+    "no support reaction of the file shows which way all its components count "
+    "(write the supports' reactions as well, or say so in [actions] section_forces)"
+)
+CONTRADICTED = "the file's own support reactions differ from its point reactions on members"
+ALIKE = "the axial figures at both ends of the member are one, as forces inside a member are and reactions are not"
 
-FORCES, MOMENTS = ("ForceX", "ForceY", "ForceZ"), ("MomentX", "MomentY", "MomentZ")
+
+def is_analysis(path: Path) -> bool:
+    """Whether a file of actions is an IFC file rather than a table."""
+    if path.suffix.lower() in (".ifc", ".ifczip", ".ifcxml"):
+        return True
+    try:
+        with path.open("rb") as stream:
+            return stream.read(64).lstrip(b"\xef\xbb\xbf \r\n\t").startswith(b"ISO-10303-21")
+    except OSError:
+        return False
 
 
-@dataclass(frozen=True, slots=True, eq=False)
-class EndForces:
-    """What a joint exerts on a member's end: force in N, moment in Nmm, both in world axes.
+def read_analysis(
+    path_or_file: str | Path | Any, section_forces: Literal["shown", "towards_end"] = "shown"
+) -> list[EndForces]:
+    """Return the forces on the ends of structural members, each end in each case, doubtful ones too.
 
-    `point` is the end in mm, `inwards` the way from it into the member, `source` the entity it was read from.
+    Takes a path or an open ``ifcopenshell.file``; `section_forces` says how samples along a member are signed where
+    the file's support reactions show nothing ("shown": not at all). Raises ModelError for a file that cannot be
+    opened, ActionsError for one without results or without the unit of its moments.
     """
-
-    point: Array
-    inwards: Array
-    case: str
-    force: Array
-    moment: Array
-    source: str
-
-
-@dataclass(frozen=True, slots=True)
-class AnalysisResults:
-    """The member-end forces of an analysis model, and notes on what was left out."""
-
-    ends: tuple[EndForces, ...]
-    notes: tuple[str, ...]
+    is_path = isinstance(path_or_file, str | Path)
+    name = str(path_or_file) if is_path else "the analysis"
+    file = open_model(Path(path_or_file)) if is_path else checked(path_or_file, name)
+    model = StructuralReader(file, name).read()
+    if not model.reactions:
+        raise ActionsError(f"{name}: it holds no analysis results (reactions on structural members or supports).")
+    signs = learn_signs(model)
+    if section_forces == "towards_end":
+        signs = or_else(signs, TOWARDS_END)
+    ends = [*_on_members(model), *_inside_members(model, signs), *_at_supports(model)]
+    sure = {(each.place, each.case) for each in ends if each.doubt is None}
+    return [each for each in ends if each.doubt is None or (each.place, each.case) not in sure]
 
 
-def read_analysis(file: Any, path: Path) -> AnalysisResults:
-    """Read the member-end forces of every result group of an open IFC file."""
-    return _Analysis(file, path).results()
+def _end_forces(
+    reaction: Reaction, member: StructuralMember, end: MemberEnd, basis: Array, components: Array, **told: Any
+) -> EndForces:
+    run = member.end - member.start
+    inward = run if end == "start" else -run
+    case = reaction.case
+    return EndForces(
+        member=member.name,
+        end=end,
+        case=case.name,
+        is_combination=case.is_combination,
+        point=member.start if end == "start" else member.end,
+        axis=unit(inward) if np.linalg.norm(run) > SAME_PLACE else np.full(3, math.nan),
+        basis=basis,
+        force=components[:3],
+        moment=components[3:],
+        source=f"{reaction.label} on {member.name} ({end}), {case.kind} {case.name}".rstrip(),
+        **told,
+    )
 
 
-@dataclass(frozen=True, slots=True, eq=False)
-class _Line:
-    """A curve member: its ends in mm and its local axes as rows; None where its z axis is not told."""
-
-    start: Array
-    end: Array
-    axes: Array | None
-
-    @property
-    def length(self) -> Mm:
-        return float(np.linalg.norm(self.end - self.start))
+def _doubtful(reaction: Reaction, member: StructuralMember, end: MemberEnd, doubt: str) -> EndForces:
+    return _end_forces(reaction, member, end, np.eye(3), np.full(6, math.nan), doubt=doubt)
 
 
-class _Analysis:
-    """One pass over the results of one file."""
-
-    def __init__(self, file: Any, path: Path) -> None:
-        self.file, self.name = file, path.name
-        self.length = read_units(file).length
-        self.placements = Placements(self.length)
-        self.force = unit_util.calculate_unit_scale(file, "FORCEUNIT")
-        self.moment = 1000.0 * unit_util.calculate_unit_scale(file, "TORQUEUNIT")
-        self.left_out: dict[str, int] = defaultdict(int)
-        self.lines: dict[int, _Line | None] = {}
-
-    def results(self) -> AnalysisResults:
-        ends = tuple(self._ends())
-        notes = [f"{self.name}: {count} result(s) not used: {why}" for why, count in self.left_out.items()]
-        if not ends:
-            notes.append(f"{self.name}: no member-end forces were found in it")
-        elif any("IfcStructuralCurveReaction" in end.source for end in ends):
-            notes.append(
-                f"{self.name}: results along members were read as stress resultants on the face that looks from the "
-                "member's start to its end, Fx > 0 in tension; check the sign of one joint by hand"
-            )
-        return AnalysisResults(ends, tuple(notes))
-
-    def _ends(self) -> Iterator[EndForces]:
-        for group in self.file.by_type("IfcStructuralResultGroup"):
-            case = self._case(group)
-            for relation in group.IsGroupedBy:
-                for activity in relation.RelatedObjects:
-                    if activity.is_a("IfcStructuralReaction"):
-                        yield from self._of_activity(activity, case)
-
-    def _case(self, group: Any) -> str:
-        load = group.ResultForLoadGroup
-        return str((load.Name if load is not None else None) or group.Name or f"#{group.id()}")
-
-    def _of_activity(self, activity: Any, case: str) -> Iterator[EndForces]:
-        member = _member_of(activity)
-        line = self._line(member) if member is not None else None
-        if line is None:
-            self.left_out["it stands on no straight member"] += 1
-        elif activity.GlobalOrLocal == "LOCAL_COORDS" and line.axes is None:
-            self.left_out["it is in local axes, and its member does not say where its z axis points"] += 1
-        elif activity.is_a("IfcStructuralCurveReaction"):
-            yield from self._along(activity, member, line, case)
-        elif activity.is_a("IfcStructuralPointReaction"):
-            yield from self._at_point(activity, member, line, case)
-
-    def _along(self, activity: Any, member: Any, line: _Line, case: str) -> Iterator[EndForces]:
-        """Read the resultants at both ends: the joint acts on the start with their opposites, on the end with them."""
-        load = activity.AppliedLoad
-        if not load.is_a("IfcStructuralLoadConfiguration") or not load.Locations:
-            self.left_out["it gives no values at places along its member"] += 1
-            return
-        for value, place in zip(load.Values, load.Locations, strict=False):
-            at = float(place[0]) * self.length / line.length
-            if not value.is_a("IfcStructuralLoadSingleForce"):
-                self.left_out[f"its values are {value.is_a()}"] += 1
-            elif abs(at) < AT_END:
-                yield self._end(activity, member, line, case, (True, -1.0), value)
-            elif abs(at - 1.0) < AT_END:
-                yield self._end(activity, member, line, case, (False, 1.0), value)
-
-    def _at_point(self, activity: Any, member: Any, line: _Line, case: str) -> Iterator[EndForces]:
-        point = self._point(activity)
-        load = activity.AppliedLoad
-        if point is None or not load.is_a("IfcStructuralLoadSingleForce"):
-            self.left_out["a reaction does not say where it acts, or is no single force"] += 1
-            return
-        away = [float(np.linalg.norm(point - end)) for end in (line.start, line.end)]
-        if min(away) > AT_END * line.length:
-            self.left_out["a reaction acts between its member's ends"] += 1
-            return
-        yield self._end(activity, member, line, case, (away[0] < away[1], 1.0), load)
-
-    def _end(
-        self, activity: Any, member: Any, line: _Line, case: str, which: tuple[bool, float], load: Any
-    ) -> EndForces:
-        at_start, sign = which
-        turn = line.axes if activity.GlobalOrLocal == "LOCAL_COORDS" and line.axes is not None else np.eye(3)
-        force = np.array([getattr(load, name) or 0.0 for name in FORCES]) * self.force * sign
-        moment = np.array([getattr(load, name) or 0.0 for name in MOMENTS]) * self.moment * sign
-        ends = (line.start, line.end) if at_start else (line.end, line.start)
-        source = f"{self.name}, {activity.is_a()} #{activity.id()} on {member.Name or f'#{member.id()}'}"
-        return EndForces(ends[0], unit(ends[1] - ends[0]), case, force @ turn, moment @ turn, source)
-
-    def _line(self, member: Any) -> _Line | None:
-        if member.id() not in self.lines:
-            self.lines[member.id()] = self._read_line(member)
-        return self.lines[member.id()]
-
-    def _read_line(self, member: Any) -> _Line | None:
-        edges = [item for item in _items(member) if item.is_a("IfcEdge")]
-        if len(edges) != 1:
-            return None
-        world = self.placements.of_element(member.ObjectPlacement)
-        ends = []
-        for vertex in (edges[0].EdgeStart, edges[0].EdgeEnd):
-            if not vertex.is_a("IfcVertexPoint"):
-                return None
-            ends.append(world[:3, :3] @ self.placements.point(vertex.VertexGeometry) + world[:3, 3])
-        if np.linalg.norm(ends[1] - ends[0]) < 1.0:
-            return None
-        return _Line(ends[0], ends[1], _axes(unit(ends[1] - ends[0]), getattr(member, "Axis", None), world))
-
-    def _point(self, activity: Any) -> Array | None:
-        for item in _items(activity):
-            if item.is_a("IfcVertexPoint"):
-                world = self.placements.of_element(activity.ObjectPlacement)
-                point: Array = world[:3, :3] @ self.placements.point(item.VertexGeometry) + world[:3, 3]
-                return point
-        return None
+def _on_members(model: StructuralModel) -> Iterator[EndForces]:
+    """Yield point reactions on curve members, in doubt where the file itself speaks against them."""
+    placed = [*_at_points(model)]
+    contradicted, inside = _contradicted(placed, model), _like_inside(placed)
+    for number, each in placed:
+        doubt = CONTRADICTED if contradicted else ALIKE if (number, each.case) in inside else None
+        yield each if each.doubt or doubt is None else replace(each, doubt=doubt)
 
 
-def _member_of(activity: Any) -> Any | None:
-    for relation in activity.AssignedToStructuralItem:
-        if relation.RelatingElement.is_a("IfcStructuralCurveMember"):
-            return relation.RelatingElement
-    return None
+def _at_points(model: StructuralModel) -> Iterator[tuple[int, EndForces]]:
+    """Yield point reactions at the ends of curve members, with the members' step numbers."""
+    for reaction in model.reactions:
+        member = model.members.get(reaction.item)
+        if member is None or reaction.kind != "point":
+            continue
+        doubt = member.doubt or reaction.doubt
+        if doubt:
+            yield from ((reaction.item, _doubtful(reaction, member, end, doubt)) for end in ENDS)
+            continue
+        (sample,) = reaction.samples
+        if not math.isnan(sample.at):
+            end: MemberEnd = "start" if sample.at == 0.0 else "end"
+            told = np.concatenate([sample.force, sample.moment])
+            yield reaction.item, _end_forces(reaction, member, end, reaction.basis, told)
 
 
-def _items(product: Any) -> list[Any]:
-    shape = product.Representation
-    return [] if shape is None else [item for each in shape.Representations for item in each.Items]
+def _contradicted(placed: Iterable[tuple[int, EndForces]], model: StructuralModel) -> bool:
+    """Whether any support's reaction differs from the point reaction on the member's end that it holds alone."""
+    truths = supports(model)
+    votes = []
+    for number, each in placed:
+        truth, local = truths.get((number, each.end, each.case)), model.members[number].local
+        if truth is not None and local is not None and each.doubt is None:
+            votes.append(compare(truth, six(each.basis, each.force, each.moment, local)))
+    return bool((agreed(votes) < 1.0).any())
 
 
-def _axes(x: Array, axis: Any, world: Array) -> Array | None:
-    """Return a member's local axes as rows; None where its z axis is not told or lies along it."""
-    if axis is None:
-        return None
-    told = world[:3, :3] @ np.array(axis.DirectionRatios, float)
-    across = told - (told @ x) * x
-    if np.linalg.norm(across) < 1e-6 * np.linalg.norm(told):
-        return None
-    z = unit(across)
-    return np.array([x, cross(z, x), z])
+def _like_inside(placed: Iterable[tuple[int, EndForces]]) -> set[tuple[int, str]]:
+    """Return the members and cases whose axial figures at both ends are one, as those of a force inside are.
+
+    Actions on the two ends of a member that carries no load along itself are opposite.
+    """
+    axial: dict[tuple[int, str], dict[MemberEnd, float]] = {}
+    for number, each in placed:
+        if each.doubt is None:
+            axial.setdefault((number, each.case), {})[each.end] = each.force_along(each.axis)
+    return {
+        key
+        for key, both in axial.items()
+        if len(both) == 2
+        and abs(both["start"]) > NEGLIGIBLE[0]
+        and abs(both["start"] + both["end"]) <= SAME * abs(both["start"])
+    }
+
+
+def _inside_members(model: StructuralModel, signs: Signs) -> Iterator[EndForces]:
+    """Yield what curve reactions on members say of their ends."""
+    for reaction in model.reactions:
+        member = model.members.get(reaction.item)
+        if member is None or reaction.kind == "point":
+            continue
+        doubt = member.doubt or reaction.doubt
+        for end in ENDS:
+            if doubt or member.local is None:
+                yield _doubtful(reaction, member, end, doubt or "the member's local axes cannot be told")
+                continue
+            acting = signs.on_end(reaction, member, end)
+            if acting is None:
+                yield _doubtful(reaction, member, end, "it has no sample at this end")
+            else:
+                yield _end_forces(reaction, member, end, member.local, acting, gap=UNSIGNED)
+
+
+def _at_supports(model: StructuralModel) -> Iterator[EndForces]:
+    """Yield what reactions of connections say of the ends of the members they join."""
+    for reaction in model.reactions:
+        connection = model.connections.get(reaction.item)
+        if connection is None:
+            continue
+        doubt = reaction.doubt
+        if connection.loaded:
+            doubt = doubt or "an action stands on the connection as well"
+        if len(connection.members) > 1:
+            doubt = doubt or f"{len(connection.members)} members share the connection {connection.name}"
+        for number in sorted(connection.members & set(model.members)):
+            member = model.members[number]
+            end = member.end_at(connection.point)
+            if end is None:
+                continue
+            if member.doubt or doubt:
+                yield _doubtful(reaction, member, end, member.doubt or doubt or "")
+            else:
+                told = np.concatenate([reaction.samples[0].force, reaction.samples[0].moment])
+                yield _end_forces(reaction, member, end, reaction.basis, told)
