@@ -2,23 +2,31 @@
 
 from __future__ import annotations
 
+import re
 from typing import Any
 
+import ifcopenshell.util.element as element_util
 import numpy as np
 
 from ..model.parts import WeldPart
 from ..model.units import Array
 from .bodies import BodyReader
 from .bolt_lines import lines_of
+from .fastener_kinds import texts_of
 from .properties import PropertyTable
 
 SQRT_HALF = 0.5**0.5
 
 
+NO_FILLET = re.compile(r"groove|butt|plug|slot|spot|seam|edge|surfac|backing|^[HIJKUVXY]$", re.IGNORECASE)
+"""Words and ISO 2553 letters of welds whose leg says nothing about their throat."""
+
+
 def is_weld(element: Any) -> bool:
-    """Whether a fastener is a weld, by its type or by its name."""
-    texts = [getattr(element, name, None) for name in ("PredefinedType", "ObjectType", "Name", "Description")]
-    return any("weld" in text.lower() for text in texts if text)
+    """Whether a fastener is a weld, by its own or its type's kind or name."""
+    owner = element_util.get_type(element)
+    kinds = [str(getattr(each, "PredefinedType", None)) for each in (element, owner)]
+    return any("weld" in text.lower() for text in (*kinds, *(text for text, _ in texts_of(element, owner))))
 
 
 def read_weld(element: Any, bodies: BodyReader, properties: PropertyTable) -> WeldPart | None:
@@ -26,15 +34,11 @@ def read_weld(element: Any, bodies: BodyReader, properties: PropertyTable) -> We
     points = _points(element, bodies)
     if points is None:
         return None
-    throat, leg = properties.length(element, "weld_throat"), properties.length(element, "weld_leg")
+    kind = properties.text(element, "weld_type") or element.ObjectType or "weld"
+    throat = properties.length(element, "weld_throat")
+    leg = properties.length(element, "weld_leg") if throat is None and not NO_FILLET.search(kind.strip()) else None
     size = throat[0] if throat else leg[0] * SQRT_HALF if leg else None
-    return WeldPart(
-        element.GlobalId,
-        points.min(axis=0),
-        points.max(axis=0),
-        properties.text(element, "weld_type") or element.ObjectType or "weld",
-        size,
-    )
+    return WeldPart(element.GlobalId, points.min(axis=0), points.max(axis=0), kind, size)
 
 
 def _points(element: Any, bodies: BodyReader) -> Array | None:
