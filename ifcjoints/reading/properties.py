@@ -86,7 +86,9 @@ def _first(value: Any) -> Any:
     return value[0] if isinstance(value, tuple | list) else value
 
 
-NUMBER = re.compile(r"\s*(?:(\d+)[ -])?(\d+(?:\.\d+)?)(?:/(\d+))?\s*(mm|cm|m|in|inch|\"|″|)\.?\s*$")
+NUMBER = re.compile(
+    r"\s*(?:(?:(\d+)[ -])?(\d+)/(\d+)|(\d+(?:\.\d+)?))\s*(mm|cm|m|in|inch|\"|″|)\.?\s*$",
+)
 UNITS: dict[str, Mm] = {"mm": 1.0, "cm": 10.0, "m": 1000.0, "in": INCH, "inch": INCH, '"': INCH, "″": INCH}
 
 
@@ -97,6 +99,6 @@ def _length(value: Any, unit: str, model: Mm) -> tuple[Mm, bool] | None:
     found = NUMBER.match(str(value))
     if found is None:
         return None
-    whole, above, below, written = found.groups()
-    number = float(whole or 0) + float(above) / (float(below or 1) or 1.0)
+    whole, above, below, plain, written = found.groups()
+    number = float(plain) if plain else float(whole or 0) + float(above) / (float(below) or 1.0)
     return number * UNITS.get(written or unit, model), bool(written) or unit in UNITS
