@@ -59,4 +59,4 @@ def along(basis: Array, components: Array, direction: Array) -> float:
 
 def turned(basis: Array, components: Array, into: Array) -> Array:
     """Return a vector's components (3,) along the rows of another basis."""
-    return np.array([along(basis, components, direction) for direction in into])
+    return components if basis is into else np.array([along(basis, components, direction) for direction in into])

@@ -60,9 +60,9 @@ class StructuralReader:
 
     def _member(self, member: Any) -> StructuralMember:
         name = f"{member.Name or 'member'} #{member.id()}"
-        edge = _topology(member, "IfcEdge")
-        doubt = _edge_doubt(edge)
+        edge, doubt = _topology(member, "IfcEdge"), None
         try:
+            doubt = _edge_doubt(edge)
             matrix = self.places.of_element(member.ObjectPlacement)
             while edge.is_a("IfcOrientedEdge"):
                 edge = edge.EdgeElement
@@ -86,14 +86,20 @@ class StructuralReader:
         if vertex is None or not vertex.VertexGeometry.is_a("IfcCartesianPoint"):
             return None
         placement = product.ObjectPlacement if product.ObjectPlacement is not None else inherited
-        return self._placed(self.places.of_element(placement), vertex.VertexGeometry)
+        try:
+            return self._placed(self.places.of_element(placement), vertex.VertexGeometry)
+        except ValueError:
+            return None
 
     def _reactions(self, item: Any, activity: Any, model: StructuralModel) -> Iterator[Reaction]:
         """Yield a reaction once for each case that it belongs to."""
         if item.id() not in model.members and item.id() not in model.connections:
             return
         label = f"{self.name}, #{activity.id()} {activity.is_a()}{self.assumed}"
-        basis, doubt = self._basis(item, activity, model)
+        try:
+            basis, doubt = self._basis(item, activity, model)
+        except ValueError as error:
+            basis, doubt = np.eye(3), str(error)
         kind: Kind = "point" if activity.is_a("IfcStructuralPointReaction") else _distribution(activity)
         samples, unread = self._samples(item, activity, model)
         if samples is None:
@@ -126,6 +132,8 @@ class StructuralReader:
     ) -> tuple[tuple[Sample, ...] | None, str | None]:
         """Return a reaction's forces, or None if it tells of no forces; and why they are in doubt."""
         load = activity.AppliedLoad
+        if load is None:
+            return (), "its forces are missing"
         values = load.Values if load.is_a("IfcStructuralLoadConfiguration") else [load]
         if any("Displacement" in value.is_a() for value in values):
             return None, None

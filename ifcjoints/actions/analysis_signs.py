@@ -146,7 +146,7 @@ def learn_signs(model: StructuralModel) -> Signs:
     for reaction, member in along:
         for end in ENDS:
             truth = truths.get((reaction.item, end, reaction.case.name))
-            given = sample_at(reaction, member, end)
+            given = None if truth is None else sample_at(reaction, member, end)
             if truth is None or given is None:
                 continue
             if reaction.is_inside(inside):
@@ -185,6 +185,8 @@ def _lend(signs: Array, along: list[tuple[Reaction, StructuralMember]]) -> Array
     """Let a shear whose sign is known tell that of its moment, and the other way round."""
     for shear, moment, law in BENDING:
         votes = []
+        if not np.isnan(signs[[shear, moment]]).any():
+            continue
         for reaction, member in along:
             if slope := _slope_sign(reaction, member, shear, moment):
                 vote = np.full(6, math.nan)

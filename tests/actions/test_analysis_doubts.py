@@ -148,12 +148,38 @@ def turned_edge(analysis, member):
     analysis.results("ULS", analysis.at_point(member, NODE, REACTION))
 
 
+def forceless(analysis, member):
+    reaction = analysis.at_point(member, NODE, REACTION)
+    reaction.AppliedLoad = None
+    analysis.results("ULS", reaction)
+
+
+def on_a_grid(analysis, member):
+    member.ObjectPlacement = analysis.add("IfcGridPlacement")
+    analysis.results("ULS", analysis.at_point(member, NODE, REACTION))
+
+
+def without_an_edge(analysis, member):
+    member.Representation = None
+    analysis.results("ULS", analysis.at_point(member, NODE, REACTION))
+
+
+@pytest.mark.parametrize("break_it", [on_a_grid, without_an_edge])
+def test_a_member_that_has_no_place_is_told_as_left_over(break_it, tmp_path):
+    analysis = Analysis()
+    break_it(analysis, analysis.member(NODE, FAR))
+    result = audited(analysis, tmp_path)
+    assert acting(result) == {}
+    assert said(result, "act on no joint that was found")
+
+
 @pytest.mark.parametrize(
     ("write", "why"),
     [
         (spread, "says nothing of single sections"),
         (short, "has no sample at this end"),
         (nowhere, "does not say at which end"),
+        (forceless, "forces are missing"),
         (turned_edge, "its edge is turned round"),
     ],
 )
