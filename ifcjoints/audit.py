@@ -11,7 +11,7 @@ from .actions.analysis import is_analysis, read_analysis
 from .actions.analysis_matching import match_analysis
 from .actions.matching import MatchedActions, match_actions
 from .actions.table import read_actions
-from .checking.registry import InstalledCheck, installed_checks
+from .checking.registry import InstalledCheck, installed_checks, refuse_unknown
 from .checking.runner import resolve_options, run_checks
 from .detection.find_joints import find_joints
 from .model.audit import Audit, BasisRecord, CheckInfo, FileReference, Generator
@@ -46,6 +46,7 @@ def audit(
     settings = settings or Settings()
     tell = progress or (lambda _text, _share: None)
     checks = installed_checks(packs, only)
+    refuse_unknown(settings.checks)
     options = resolve_options(checks, settings.checks)
     path = Path(model) if isinstance(model, str | Path) else None
     file = open_model(path) if path else checked(model, "the model")

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 from fnmatch import fnmatchcase
 from importlib.metadata import EntryPoint, entry_points
@@ -38,6 +38,14 @@ def installed_checks(packs: Sequence[str] = (), only: str | None = None) -> list
         for point in points
         if (not packs or _package(point) in packs) and (only is None or fnmatchcase(point.name, only))
     ]
+
+
+def refuse_unknown(names: Iterable[str]) -> None:
+    """Raise SettingsError for a check that options are given to and that no installed pack has."""
+    known = sorted({point.name for point in entry_points(group=GROUP)})
+    for name in names:
+        if name not in known:
+            raise SettingsError(f'the settings give options to a check "{name}"; installed are: {", ".join(known)}.')
 
 
 def _package(point: EntryPoint) -> str:

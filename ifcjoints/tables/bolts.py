@@ -46,6 +46,14 @@ class BoltSize:
     source: str
 
 
+PROPERTY_CLASS = re.compile(
+    r"(?<![\d.,MmDdLl=])(?<![=x×*] )(?<!length )(?<!grip )(4\.6|4\.8|5\.6|5\.8|6\.8|8\.8|10\.9)"
+    r"(?![\d.,]*\d)(?!\s?(?:mm|cm|m\b|in\b|\"|x|×|\*))",
+    re.IGNORECASE,
+)
+"""A property class standing by itself; a size ("L=8.8 mm", "M8.8x40", "length 10.9") is none."""
+
+
 @cache
 def bolt_grade(text: str) -> BoltGrade | None:
     """Return the grade that a text names ("8.8", "M20x60 10.9", "A325N", "D=3/4 L=2 A490-X"), or None.
@@ -60,7 +68,7 @@ def bolt_grade(text: str) -> BoltGrade | None:
     if american:
         name, group, suffix = american.groups(default="")
         return _american(f"Group {group}" if group else re.sub(r"\s", "", name), suffix)
-    class_ = re.search(r"(?<![\d.])(4\.6|4\.8|5\.6|5\.8|6\.8|8\.8|10\.9)(?![\d.]*\d)", text)
+    class_ = PROPERTY_CLASS.search(text)
     if class_ is None:
         return None
     row = _grades()[class_.group(1)]

@@ -83,3 +83,9 @@ def test_a_check_goes_by_one_name(install, monkeypatch):
     install(point(lambda: check, "another.name"))
     with pytest.raises(CheckRegistrationError, match=r"another\.name .*does not name a check of that name"):
         installed_checks()
+
+
+def test_options_of_a_check_that_is_not_installed_are_refused():
+    with pytest.raises(SettingsError, match=r"bolt_group\.plastc.*bolt_group\.plastic"):
+        registry.refuse_unknown(["bolt_group.plastc"])
+    registry.refuse_unknown(["bolt_group.plastic"])

@@ -26,7 +26,26 @@ def test_bolt_grades(text, name):
 
 @pytest.mark.parametrize(
     "text",
-    ["", "18.8", "8.85", "M8x40", "A3250", "BA325", "10.9.1", "length 108.8", "12.9", "a 325 mm rod", "Group 130"],
+    [
+        "",
+        "18.8",
+        "8.85",
+        "M8x40",
+        "A3250",
+        "BA325",
+        "10.9.1",
+        "length 108.8",
+        "L=8.8 mm",
+        "8.8mm",
+        "length 10.9",
+        "M8.8x40",
+        "grip 8.8",
+        "D=5.6",
+        "8.8 x 40",
+        "12.9",
+        "a 325 mm rod",
+        "Group 130",
+    ],
 )
 def test_what_is_no_bolt_grade(text):
     assert bolt_grade(text) is None
