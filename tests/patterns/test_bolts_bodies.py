@@ -116,7 +116,7 @@ def test_a_revolved_bolt():
             SweptArea=model.outline([ring]), Position=model.axes(at()), Axis=axis, Angle=2 * math.pi,
         )  # fmt: skip
         model.product("IfcMechanicalFastener", "8.8", place @ at(axis=(0, -1, 0), ref=(1, 0, 0)), [solid])
-    check(model, tolerance=0.3)
+    check(model, tolerance=0.01)
 
 
 def test_a_swept_disk():
@@ -126,7 +126,7 @@ def test_a_swept_disk():
         solid = model.add("IfcSweptDiskSolid", Directrix=line, Radius=D / 2)
         head = model.extruded(model.outline([circle(HEX, 6)]), 15.0, at(z=-15.0))
         model.product("IfcMechanicalFastener", "8.8", place, [solid, head], "AdvancedSweptSolid")
-    check(model, tolerance=0.3)
+    check(model, tolerance=0.01)
 
 
 def test_a_csg_bolt():
@@ -137,7 +137,7 @@ def test_a_csg_bolt():
         union = model.add("IfcBooleanResult", Operator="UNION", FirstOperand=shank, SecondOperand=head)
         solid = model.add("IfcCsgSolid", TreeRootExpression=union)
         model.product("IfcMechanicalFastener", "8.8", place, [solid], "CSG")
-    check(model, tolerance=0.3)
+    check(model, tolerance=0.01)
 
 
 @pytest.mark.parametrize(
