@@ -9,6 +9,9 @@ What is read, and as what:
   signed as the file's own support reactions show (see :mod:`.analysis_signs`); without such a witness not used,
   unless the settings say how they are signed.
 
+Where all loads of a case can be told and its support reactions are those loads again instead of their opposites, the
+file means reactions the other way round, and nothing of it is used.
+
 All three are forces at the end of the member's axis. They are taken as they stand there: nothing is moved to the
 face of the support, combined, or multiplied by factors. What cannot be told for certain keeps a `doubt`.
 """
@@ -29,6 +32,7 @@ from ..model.joints import MemberEnd
 from ..model.units import Array
 from ..reading.open_model import checked, open_model
 from .analysis_ends import EndForces
+from .analysis_loads import reactions_follow_loads
 from .analysis_model import SAME_PLACE, Reaction, StructuralMember, StructuralModel
 from .analysis_reading import StructuralReader
 from .analysis_signs import (
@@ -49,6 +53,7 @@ UNSIGNED = (
     "no support reaction of the file shows which way all its components count "
     "(write the supports' reactions as well, or say so in [actions] section_forces)"
 )
+FOLLOWING = "the file's support reactions are its loads again, not their opposites: they act on the supports"
 CONTRADICTED = "the file's own support reactions differ from its point reactions on members"
 ALIKE = "the axial figures at both ends of the member are one, as forces inside a member are and reactions are not"
 
@@ -83,6 +88,8 @@ def read_analysis(
     if section_forces == "towards_end":
         signs = or_else(signs, TOWARDS_END)
     ends = [*_on_members(model), *_inside_members(model, signs), *_at_supports(model)]
+    if reactions_follow_loads(model, SAME):
+        ends = [replace(each, doubt=each.doubt or FOLLOWING) for each in ends]
     sure = {(each.place, each.case) for each in ends if each.doubt is None}
     return [each for each in ends if each.doubt is None or (each.place, each.case) not in sure]
 

@@ -91,8 +91,12 @@ class Reaction:
 
 @dataclass(slots=True)
 class StructuralModel:
-    """All that a file says of members' forces; members and connections by their step numbers."""
+    """All that a file says of members' forces; members and connections by their step numbers.
+
+    `loads` holds the resultants (3,) of the cases all of whose loads can be told, in the world, N.
+    """
 
     members: dict[int, StructuralMember] = field(default_factory=dict)
     connections: dict[int, Connection] = field(default_factory=dict)
     reactions: list[Reaction] = field(default_factory=list)
+    loads: dict[str, Array] = field(default_factory=dict)

@@ -9,7 +9,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Iterator
-from typing import Any
+from typing import Any, NamedTuple
 
 import numpy as np
 
@@ -18,7 +18,21 @@ from ..model.geometry import cross, unit
 from ..model.units import Array, Mm
 from ..reading.placements import Placements, is_rigid
 from ..reading.units import read_factor, read_units
+from .analysis_loads import resultant_of
 from .analysis_model import SAME_PLACE, Case, Connection, Kind, Reaction, Sample, StructuralMember, StructuralModel
+
+
+class ForceUnits(NamedTuple):
+    """The mm, N, Nmm and N/m in one of a file's units of length, force, moment and force along a line.
+
+    `assumed` is a word on what was taken to be SI.
+    """
+
+    length: float
+    newton: float
+    newton_mm: float
+    newton_per_m: float | None
+    assumed: str
 
 
 class StructuralReader:
@@ -26,8 +40,8 @@ class StructuralReader:
 
     def __init__(self, file: Any, name: str) -> None:
         self.file, self.name = file, name
-        self.length, self.newton, self.newton_mm, self.assumed = _units(file, name)
-        self.places = Placements(self.length)
+        self.units = _units(file, name)
+        self.places = Placements(self.units.length)
 
     def read(self) -> StructuralModel:
         """Read members, connections and reactions."""
@@ -44,7 +58,40 @@ class StructuralReader:
                 model.connections[number] = Connection(name, point, frozenset(members), number in loaded)
         for rel in self._activities("IfcStructuralReaction"):
             model.reactions += self._reactions(rel.RelatingElement, rel.RelatedStructuralActivity, model)
+        for group in self.file.by_type("IfcStructuralResultGroup"):
+            load = group.ResultForLoadGroup
+            total = None if load is None else resultant_of(load, lambda action: self._resultant(action, model))
+            if total is not None and load.Name:
+                model.loads[load.Name] = total
         return model
+
+    def _resultant(self, action: Any, model: StructuralModel) -> Array | None:
+        """Return an action's resultant: of a single force, or of a constant one along a whole member."""
+        items = [rel.RelatingElement for rel in action.AssignedToStructuralItem]
+        load = action.AppliedLoad
+        if len(items) != 1 or load is None:
+            return None
+        try:
+            basis, doubt = self._basis(items[0], action, model)
+        except ValueError:
+            return None
+        member = model.members.get(items[0].id())
+        whole = getattr(action, "PredefinedType", None) == "CONST"
+        if load.is_a("IfcStructuralLoadSingleForce") and action.is_a("IfcStructuralPointAction"):
+            parts, factor = (load.ForceX, load.ForceY, load.ForceZ), self.units.newton
+        elif (
+            load.is_a("IfcStructuralLoadLinearForce")
+            and member is not None
+            and whole
+            and action.ProjectedOrTrue != "PROJECTED_LENGTH"
+            and self.units.newton_per_m is not None
+        ):
+            parts = (load.LinearForceX, load.LinearForceY, load.LinearForceZ)
+            factor = self.units.newton_per_m * member.length / 1000.0
+        else:
+            return None
+        resultant: Array = np.array([float(part or 0.0) for part in parts]) * factor @ basis
+        return None if doubt else resultant
 
     def _joined(self) -> dict[int, set[int]]:
         """Return the members that each connection is related to, surface members too."""
@@ -95,7 +142,7 @@ class StructuralReader:
         """Yield a reaction once for each case that it belongs to."""
         if item.id() not in model.members and item.id() not in model.connections:
             return
-        label = f"{self.name}, #{activity.id()} {activity.is_a()}{self.assumed}"
+        label = f"{self.name}, #{activity.id()} {activity.is_a()}{self.units.assumed}"
         try:
             basis, doubt = self._basis(item, activity, model)
         except ValueError as error:
@@ -146,11 +193,11 @@ class StructuralReader:
         if activity.is_a("IfcStructuralPointReaction"):
             point = self._vertex(activity, item.ObjectPlacement)
             return self._one_sample(item, values[0], point, model)
-        locations = _locations(load, activity, model.members[item.id()].length / self.length)
+        locations = _locations(load, activity, model.members[item.id()].length / self.units.length)
         if locations is None or list(locations) != sorted(locations):
             return (), "the places of its samples along the member cannot be told"
         pairs = zip(locations, values, strict=True)
-        return tuple(self._sample(at * self.length, value) for at, value in pairs), None
+        return tuple(self._sample(at * self.units.length, value) for at, value in pairs), None
 
     def _one_sample(
         self, item: Any, value: Any, point: Array | None, model: StructuralModel
@@ -167,14 +214,15 @@ class StructuralReader:
     def _sample(self, at: Mm, value: Any) -> Sample:
         force = [_number(value.ForceX), _number(value.ForceY), _number(value.ForceZ)]
         moment = [_number(value.MomentX), _number(value.MomentY), _number(value.MomentZ)]
-        return Sample(at, np.array(force) * self.newton, np.array(moment) * self.newton_mm)
+        return Sample(at, np.array(force) * self.units.newton, np.array(moment) * self.units.newton_mm)
 
 
-def _units(file: Any, name: str) -> tuple[float, float, float, str]:
-    """Return the mm, N and Nmm in one unit of length, force and moment, and a word on what was assumed."""
+def _units(file: Any, name: str) -> ForceUnits:
+    """Read a file's units; ActionsError where the one of moments cannot be told."""
     try:
         length = read_units(file).length
-        force, torque = read_factor(file, "FORCEUNIT"), read_factor(file, "TORQUEUNIT")
+        kinds = ("FORCEUNIT", "TORQUEUNIT", "LINEARFORCEUNIT")
+        force, torque, spread = (read_factor(file, kind) for kind in kinds)
     except ModelError as error:
         raise ActionsError(f"{name}: {error}") from error
     if torque is None and (force not in (None, 1.0) or length != 1000.0):
@@ -183,7 +231,9 @@ def _units(file: Any, name: str) -> tuple[float, float, float, str]:
         )
     missing = [word for word, factor in (("N", force), ("Nm", torque)) if factor is None]
     assumed = f" (unit not stated, {' and '.join(missing)} taken)" if missing else ""
-    return length, 1.0 if force is None else force, 1000.0 * (1.0 if torque is None else torque), assumed
+    return ForceUnits(
+        length, 1.0 if force is None else force, 1000.0 * (1.0 if torque is None else torque), spread, assumed
+    )
 
 
 def _touching(point: Array, members: dict[int, StructuralMember]) -> set[int]:

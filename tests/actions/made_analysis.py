@@ -30,7 +30,10 @@ class Analysis(Model):
         metre = self.add("IfcSIUnit", UnitType="LENGTHUNIT", Name="METRE")
         parts = [self.add("IfcDerivedUnitElement", Unit=each, Exponent=1) for each in (newton, metre)]
         moment = self.add("IfcDerivedUnit", Elements=parts, UnitType="TORQUEUNIT")
-        more = [newton, moment] if torque else [newton]
+        powers = ((newton, 1), (metre, -1))
+        parts = [self.add("IfcDerivedUnitElement", Unit=each, Exponent=power) for each, power in powers]
+        spread = self.add("IfcDerivedUnit", Elements=parts, UnitType="LINEARFORCEUNIT")
+        more = [newton, moment, spread] if torque else [newton]
         self.project.UnitsInContext.Units = [*self.project.UnitsInContext.Units, *more]
         self.scale = 1.0 if kilo else 1000.0
 
@@ -97,17 +100,24 @@ class Analysis(Model):
         """Add an action on a node."""
         return self.act("IfcStructuralPointAction", node, self.single(six), "GLOBAL_COORDS")
 
+    def spread(self, member: Any, z: float) -> Any:
+        """Add a constant load along a whole member, kN/m in the model's z."""
+        load = self.add("IfcStructuralLoadLinearForce", LinearForceZ=z * self.scale)
+        return self.act("IfcStructuralCurveAction", member, load, "GLOBAL_COORDS", PredefinedType="CONST")
+
     def act(self, kind: str, item: Any, load: Any, axes: str, **more: Any) -> Any:
         made = self.rooted(kind, AppliedLoad=load, GlobalOrLocal=axes, **more)
         self.rooted("IfcRelConnectsStructuralActivity", RelatingElement=item, RelatedStructuralActivity=made)
         return made
 
-    def results(self, case: str, *activities: Any, kind: str = "LOAD_COMBINATION") -> None:
-        """Group results for a load combination or case."""
+    def results(self, case: str, *activities: Any, kind: str = "LOAD_COMBINATION", loads: Sequence[Any] = ()) -> None:
+        """Group results for a load combination or case, which may hold loads."""
         group = self.rooted(
             "IfcStructuralLoadGroup", Name=case, PredefinedType=kind, ActionType="NOTDEFINED",
             ActionSource="NOTDEFINED",
         )  # fmt: skip
+        if loads:
+            self.rooted("IfcRelAssignsToGroup", RelatedObjects=list(loads), RelatingGroup=group)
         found = self.rooted(
             "IfcStructuralResultGroup", TheoryType="FIRST_ORDER_THEORY", ResultForLoadGroup=group, IsLinear=True
         )

@@ -106,6 +106,31 @@ def test_a_reaction_shared_by_several_members_or_beside_a_load_is_not_used(tmp_p
         assert said(result, "2 members share the connection" if spoil == "member" else "an action stands on")
 
 
+@pytest.mark.parametrize("sign", [1.0, -1.0])
+@pytest.mark.parametrize("nested", [False, True])
+def test_reactions_that_run_with_the_loads_are_actions_on_the_supports(sign, nested, tmp_path):
+    """The fixed beam's two reactions of 80 kN hold up 20 kN/m on 8 m; told downwards, they press on the supports."""
+    analysis = Analysis()
+    member = analysis.member(NODE, FAR)
+    six = np.array([0, 0, END_SHEAR, 0, -END_MOMENT, 0]) * sign
+    supports = [
+        analysis.support(analysis.node(NODE), six),
+        analysis.support(analysis.node(FAR), six * (1, 1, 1, 1, -1, 1)),
+    ]
+    loads = [analysis.spread(member, -20.0)]
+    if nested:
+        case = analysis.rooted(
+            "IfcStructuralLoadCase", Name="G", PredefinedType="LOAD_CASE", ActionType="PERMANENT_G",
+            ActionSource="DEAD_LOAD_G",
+        )  # fmt: skip
+        analysis.rooted("IfcRelAssignsToGroup", RelatedObjects=loads, RelatingGroup=case)
+        loads = [case]
+    analysis.results("ULS", *supports, loads=loads)
+    result = audited(analysis, tmp_path)
+    assert acting(result) == ({"ULS": pytest.approx((0, END_SHEAR, END_MOMENT))} if sign > 0 else {})
+    assert said(result, "they act on the supports") == (sign < 0)
+
+
 def test_two_results_for_one_case_must_agree(tmp_path):
     for second, used in ((9.0, True), (12.0, False)):
         analysis = Analysis()
