@@ -12,13 +12,13 @@ from ..model.parts import Bolt, BoltKind
 from ..model.units import Array, Mm
 from ..settings import Meaning
 from ..tables.bolts import bolt_grade
-from .axial import BoltBody, are_loose_parts, bolts_of
+from .axial import BoltBody
 from .bodies import BodyReader, body_of
 from .bolt_lines import bolts_from_lines
+from .bolt_shapes import BoltShapes
 from .bolt_sizes import Settled, StatedSize, settle_diameter, settle_length, sizes_in_texts
 from .fastener_kinds import Texts, is_named_bolt, kind_of, texts_of
 from .properties import PropertyTable
-from .turned import turned_bodies
 from .unreadable import Unreadable
 
 
@@ -41,7 +41,7 @@ class FastenerReader:
         self._properties = properties
         self._conflicts: list[tuple[str, str]] = []
         self._lengths: dict[str, list[str]] = {}
-        self._shapes: dict[tuple[tuple[int, bytes], ...], tuple[list[BoltBody], bool]] = {}
+        self._shapes = BoltShapes()
 
     def read(self, element: Any) -> list[Bolt]:
         """Return the bolts of one element: as many as its body shows, or one where it has none."""
@@ -76,17 +76,13 @@ class FastenerReader:
         return [*self._conflicts, *lengths]
 
     def _measured(self, element: Any) -> tuple[list[BoltBody], bool]:
-        """Measure the bolts of an element, and tell if there are but loose parts; shared shapes are measured once."""
+        """Measure the bolts of an element, and tell if there are but loose parts."""
         try:
             pieces = self._bodies.own_pieces(element)
         except Unreadable as reason:
             self._conflicts.append((element.GlobalId, f"the bolt's body cannot be read: {reason}"))
             return [], False
-        key = tuple((id(placed.piece), placed.matrix.tobytes()) for placed in pieces)
-        if key not in self._shapes:
-            bodies = turned_bodies(pieces)
-            self._shapes[key] = bolts_of(bodies), are_loose_parts(bodies)
-        bolts, loose = self._shapes[key]
+        bolts, loose = self._shapes.measured(pieces)
         world = self._bodies.world_of(element)
         return [body.moved(world) for body in bolts or bolts_from_lines(element, self._length)], loose
 
