@@ -1,38 +1,23 @@
 """IFC → a structural analysis model as plain data.
 
-Axes and places follow the documentation of the open schema (IFC4, structural analysis domain): a curve
-member's local x runs along its edge from the start vertex, its local z lies in the plane of x and `Axis`, y makes
-the frame right-handed; "global" axes are those of the object placement that all items of a model share.
+Components follow the documentation of the open schema (IFC4, structural analysis domain): "local" ones refer to
+the axes of their item, "global" ones to those of the object placement that all items of a model share.
 """
 
 from __future__ import annotations
 
 import math
 from collections.abc import Iterator
-from typing import Any, NamedTuple
+from typing import Any
 
 import numpy as np
 
-from ..errors import ActionsError, ModelError
-from ..model.geometry import cross, unit
 from ..model.units import Array, Mm
 from ..reading.placements import Placements, is_rigid
-from ..reading.units import read_factor, read_units
+from .analysis_axes import edge_doubt, local_axes, topology, touching
 from .analysis_loads import resultant_of
 from .analysis_model import SAME_PLACE, Case, Connection, Kind, Reaction, Sample, StructuralMember, StructuralModel
-
-
-class ForceUnits(NamedTuple):
-    """The mm, N, Nmm and N/m in one of a file's units of length, force, moment and force along a line.
-
-    `assumed` is a word on what was taken to be SI.
-    """
-
-    length: float
-    newton: float
-    newton_mm: float
-    newton_per_m: float | None
-    assumed: str
+from .analysis_units import read_force_units
 
 
 class StructuralReader:
@@ -40,7 +25,7 @@ class StructuralReader:
 
     def __init__(self, file: Any, name: str) -> None:
         self.file, self.name = file, name
-        self.units = _units(file, name)
+        self.units = read_force_units(file, name)
         self.places = Placements(self.units.length)
 
     def read(self) -> StructuralModel:
@@ -53,7 +38,7 @@ class StructuralReader:
         for connection in self.file.by_type("IfcStructuralPointConnection"):
             point, number = self._vertex(connection), connection.id()
             if point is not None:
-                members = joined.get(number, set()) | _touching(point, model.members)
+                members = joined.get(number, set()) | touching(point, model.members)
                 name = connection.Name or f"#{number}"
                 model.connections[number] = Connection(name, point, frozenset(members), number in loaded)
         for rel in self._activities("IfcStructuralReaction"):
@@ -107,9 +92,9 @@ class StructuralReader:
 
     def _member(self, member: Any) -> StructuralMember:
         name = f"{member.Name or 'member'} #{member.id()}"
-        edge, doubt = _topology(member, "IfcEdge"), None
+        edge, doubt = topology(member, "IfcEdge"), None
         try:
-            doubt = _edge_doubt(edge)
+            doubt = edge_doubt(edge)
             matrix = self.places.of_element(member.ObjectPlacement)
             while edge.is_a("IfcOrientedEdge"):
                 edge = edge.EdgeElement
@@ -121,7 +106,7 @@ class StructuralReader:
             doubt = doubt or "its axis has no length"
         if not is_rigid(matrix):
             doubt = doubt or "its place is scaled or mirrored"
-        return StructuralMember(name, start, end, None if doubt else _local_axes(member, matrix, end - start), doubt)
+        return StructuralMember(name, start, end, None if doubt else local_axes(member, matrix, end - start), doubt)
 
     def _placed(self, matrix: Array, point: Any) -> Array:
         placed: Array = matrix[:3, :3] @ self.places.point(point) + matrix[:3, 3]
@@ -129,7 +114,7 @@ class StructuralReader:
 
     def _vertex(self, product: Any, inherited: Any = None) -> Array | None:
         """Return where a product's vertex is; its placement may be that of the item it stands on."""
-        vertex = _topology(product, "IfcVertexPoint")
+        vertex = topology(product, "IfcVertexPoint")
         if vertex is None or not vertex.VertexGeometry.is_a("IfcCartesianPoint"):
             return None
         placement = product.ObjectPlacement if product.ObjectPlacement is not None else inherited
@@ -217,79 +202,8 @@ class StructuralReader:
         return Sample(at, np.array(force) * self.units.newton, np.array(moment) * self.units.newton_mm)
 
 
-def _units(file: Any, name: str) -> ForceUnits:
-    """Read a file's units; ActionsError where the one of moments cannot be told."""
-    try:
-        length = read_units(file).length
-        kinds = ("FORCEUNIT", "TORQUEUNIT", "LINEARFORCEUNIT")
-        force, torque, spread = (read_factor(file, kind) for kind in kinds)
-    except ModelError as error:
-        raise ActionsError(f"{name}: {error}") from error
-    if torque is None and (force not in (None, 1.0) or length != 1000.0):
-        raise ActionsError(
-            f"{name}: the unit of moments is not stated beside its other units; assign a TORQUEUNIT in the file."
-        )
-    missing = [word for word, factor in (("N", force), ("Nm", torque)) if factor is None]
-    assumed = f" (unit not stated, {' and '.join(missing)} taken)" if missing else ""
-    return ForceUnits(
-        length, 1.0 if force is None else force, 1000.0 * (1.0 if torque is None else torque), spread, assumed
-    )
-
-
-def _touching(point: Array, members: dict[int, StructuralMember]) -> set[int]:
-    """Return the members that a point lies on."""
-    if not members:
-        return set()
-    start = np.array([member.start for member in members.values()])
-    run = np.array([member.end for member in members.values()]) - start
-    length = np.maximum(np.einsum("ij,ij->i", run, run), 1e-9)
-    share = np.clip(np.einsum("ij,ij->i", point - start, run) / length, 0.0, 1.0)
-    away = np.linalg.norm(start + share[:, None] * run - point, axis=1)
-    return {number for number, distance in zip(members, away, strict=True) if distance <= SAME_PLACE}
-
-
 def _number(value: Any) -> float:
     return math.nan if value is None else float(value)
-
-
-def _topology(product: Any, kind: str) -> Any:
-    """Return the edge or vertex that represents a product, None if there is none or more than one."""
-    representations = product.Representation.Representations if product.Representation is not None else []
-    found = [item for each in representations for item in each.Items if item.is_a(kind)]
-    return found[0] if len(found) == 1 else None
-
-
-def _edge_doubt(edge: Any) -> str | None:
-    """Say why an edge does not tell a straight member's start and direction."""
-    if edge is None:
-        return "its axis is not given as one edge"
-    if edge.is_a("IfcOrientedEdge"):
-        return _edge_doubt(edge.EdgeElement) if edge.Orientation else "its edge is turned round and its start is open"
-    if not edge.is_a("IfcEdgeCurve"):
-        return None
-    curve = edge.EdgeGeometry
-    if not edge.SameSense:
-        return "its edge runs against its curve and its start is open"
-    first = curve.Pnt if curve.is_a("IfcLine") else None
-    if curve.is_a("IfcPolyline") and len(curve.Points) == 2:
-        first = curve.Points[0]
-    start = edge.EdgeStart.VertexGeometry
-    if first is None or not np.allclose(first.Coordinates, start.Coordinates, atol=1e-6):
-        return "its axis is curved, or measured from elsewhere than its start"
-    return None
-
-
-def _local_axes(member: Any, matrix: Array, run: Array) -> Array | None:
-    """Return a curve member's local x, y and z as rows; None without `Axis` (IFC2X3) or along it."""
-    axis = getattr(member, "Axis", None)
-    if axis is None:
-        return None
-    x, hint = unit(run), matrix[:3, :3] @ np.array([*axis.DirectionRatios, 0.0][:3], float)
-    z = hint - (hint @ x) * x
-    if np.linalg.norm(z) < 1e-6 * np.linalg.norm(hint) or not hint.any():
-        return None
-    z = unit(z)
-    return np.array([x, cross(z, x), z])
 
 
 def _distribution(activity: Any) -> Kind:
