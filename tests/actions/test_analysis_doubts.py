@@ -142,6 +142,15 @@ def test_two_results_for_one_case_must_agree(tmp_path):
         assert said(result, "2 times and differently") == (not used)
 
 
+def test_a_doubtful_result_beside_a_sure_one_of_the_same_case_is_passed_over(tmp_path):
+    analysis = Analysis()
+    member = analysis.member(NODE, FAR)
+    short_one = analysis.along(member, [(2000.0, REACTION), (4000.0, REACTION)])
+    result = audited(beam_with(analysis, short_one, analysis.at_point(member, NODE, REACTION)), tmp_path)
+    assert acting(result) == {"ULS": pytest.approx((0, 9.0, 6.0))}
+    assert not said(result, "has no sample")
+
+
 def test_what_belongs_to_no_case_is_not_used(tmp_path):
     analysis = Analysis()
     analysis.at_point(analysis.member(NODE, FAR), NODE, REACTION)

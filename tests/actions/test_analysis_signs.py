@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from itertools import product
 
 import numpy as np
@@ -9,6 +10,7 @@ import pytest
 
 from ifcjoints.actions.analysis import read_analysis
 from ifcjoints.actions.analysis_ends import EndForces
+from sample_models.making import turned
 from tests.actions.made_analysis import Analysis, Bar
 
 SPAN, HEIGHT, LOAD = 8.0, 4.0, 20.0
@@ -30,15 +32,19 @@ CONVENTIONS = {
 }
 
 
-def portal(turned: tuple[bool, bool, bool] = (False, False, False), pinned: bool = False) -> list[Bar]:
-    """Left column, beam and right column in equilibrium; each as modelled from its other end where turned."""
+def portal(
+    ways: tuple[bool, bool, bool] = (False, False, False), pinned: bool = False, sideways: bool = False
+) -> list[Bar]:
+    """Left column, beam and right column in equilibrium; each as modelled from its other end where said."""
     base, thrust = (0.0, LOAD * SPAN**2 / (4 * HEIGHT * (2 * K + 3))) if pinned else (BASE, THRUST)
     corner = thrust * HEIGHT - base
     left = Bar((0, 0, 0), EAVE, (thrust, 0, LIFT), (0, base, 0), z=(1, 0, 0))
     beam = Bar(EAVE, FAR_EAVE, (thrust, 0, LIFT), (0, -corner, 0), (0, 0, -LOAD))
     right = Bar((SPAN, 0, 0), FAR_EAVE, (-thrust, 0, LIFT), (0, -base, 0), z=(1, 0, 0))
     bars = (left, beam, right)
-    return [bar.backwards() if back else bar for bar, back in zip(bars, turned, strict=True)]
+    for bar in bars if sideways else ():
+        bar.z = (0, 1, 0)
+    return [bar.backwards() if back else bar for bar, back in zip(bars, ways, strict=True)]
 
 
 def write(
@@ -57,16 +63,20 @@ def write(
     return finish(analysis, activities, bars, supports)
 
 
-def write_end_actions(bars: list[Bar], sign: float = 1.0, supports: bool = True) -> list[EndForces]:
-    """Write the portal's results as concentrated reactions on the members' two ends."""
+def end_actions(analysis: Analysis, name: str, bar: Bar, sign: float = 1.0):
+    """Write a bar's results as concentrated reactions on its two ends."""
+    member = analysis.member(bar.start * 1e3, bar.end * 1e3, bar.z, name)
+    first, last = -bar.section(0.0), bar.section(bar.length)
+    samples = [(0.0, sign * bar.in_local(first)), (bar.length * 1e3, sign * bar.in_local(last))]
+    return analysis.along(member, samples, "DISCRETE")
+
+
+def write_end_actions(bars: list[Bar], sign: float = 1.0, others: Sequence[Bar] = ()) -> list[EndForces]:
+    """Write the portal's results, and those of other bars, as concentrated reactions on the members' two ends."""
     analysis = Analysis()
-    activities = []
-    for name, bar in zip(("left", "beam", "right"), bars, strict=True):
-        member = analysis.member(bar.start * 1e3, bar.end * 1e3, bar.z, name)
-        first, last = -bar.section(0.0), bar.section(bar.length)
-        samples = [(0.0, sign * bar.in_local(first)), (bar.length * 1e3, sign * bar.in_local(last))]
-        activities.append(analysis.along(member, samples, "DISCRETE"))
-    return finish(analysis, activities, bars, supports)
+    named = [*zip(("left", "beam", "right"), bars, strict=True), *(("other", bar) for bar in others)]
+    activities = [end_actions(analysis, name, bar, sign) for name, bar in named]
+    return finish(analysis, activities, bars, supports=True)
 
 
 def finish(analysis: Analysis, activities: list, bars: list[Bar], supports: bool) -> list[EndForces]:
@@ -88,9 +98,9 @@ def on_corner(ends: list[EndForces]) -> tuple[np.ndarray, np.ndarray]:
 
 
 @pytest.mark.parametrize("convention", CONVENTIONS.values(), ids=CONVENTIONS)
-@pytest.mark.parametrize("turned", list(product([False, True], repeat=3)))
-def test_the_corner_of_a_portal_whatever_the_signs_and_ways_of_the_members(convention, turned):
-    force, moment = on_corner(write(portal(turned), convention))
+@pytest.mark.parametrize("ways", list(product([False, True], repeat=3)))
+def test_the_corner_of_a_portal_whatever_the_signs_and_ways_of_the_members(convention, ways):
+    force, moment = on_corner(write(portal(ways), convention))
     assert force == pytest.approx([THRUST, 0, LIFT], abs=1e-9)
     assert moment == pytest.approx([0, -CORNER, 0], abs=1e-9)
 
@@ -102,11 +112,12 @@ def test_samples_of_any_kind_and_number(kind, stations):
     assert (force[0], force[2], moment[1]) == pytest.approx((THRUST, LIFT, -CORNER))
 
 
+@pytest.mark.parametrize("sideways", [False, True])
 @pytest.mark.parametrize("convention", CONVENTIONS.values(), ids=CONVENTIONS)
-def test_pinned_bases_show_the_moments_sign_through_the_shear(convention):
+def test_pinned_bases_show_the_moments_sign_through_the_shear(convention, sideways):
     """H = w l² / (4 h (2 k + 3)) with pinned bases, from memory; no support reaction holds a moment."""
     thrust = LOAD * SPAN**2 / (4 * HEIGHT * (2 * K + 3))
-    force, moment = on_corner(write(portal(pinned=True), convention))
+    force, moment = on_corner(write(portal(pinned=True, sideways=sideways), convention))
     assert (force[0], force[2], moment[1]) == pytest.approx((thrust, LIFT, -thrust * HEIGHT))
 
 
@@ -115,6 +126,64 @@ def test_concentrated_reactions_on_the_ends_are_told_from_forces_inside(sign):
     bars = portal((False, False, True))
     force, moment = on_corner(write_end_actions(bars, sign))
     assert (force[0], force[2], moment[1]) == pytest.approx((THRUST, LIFT, -CORNER))
+
+
+def test_a_bar_that_keeps_the_slice_law_by_chance_does_not_mislead():
+    """V_s = 30 and V_e = 50 kN under 10 kN/m on 8 m, with V_s l/2 and V_e l/2 at the ends: dM/dx = V by chance."""
+    chance = Bar((0, 50, 0), (8, 50, 0), (0, 0, 30), (0, -120, 0), (0, 0, -10))
+    force, moment = on_corner(write_end_actions(portal((False, False, True)), others=[chance]))
+    assert (force[0], force[2], moment[1]) == pytest.approx((THRUST, LIFT, -CORNER))
+
+
+def test_a_cantilevers_two_reactions_do_not_pass_for_forces_inside():
+    analysis = Analysis()
+    cantilever = Bar((0, 50, 0), (3, 50, 0), (0, 0, 60), (0, -90, 0), (0, 0, -20))
+    beam = Bar(EAVE, FAR_EAVE, (0, 0, LIFT), (0, -LOAD * SPAN**2 / 12, 0), (0, 0, -LOAD))
+    activities = [end_actions(analysis, "cantilever", cantilever), end_actions(analysis, "beam", beam)]
+    for bar in (cantilever, beam, beam.backwards()):
+        activities.append(analysis.support(analysis.node(bar.start * 1e3), (*bar.force, *bar.moment)))
+    analysis.results("ULS", *activities)
+    inside = [each for each in read_analysis(analysis.file) if "CurveReaction" in each.source]
+    far = next(each for each in inside if each.member.startswith("beam") and each.end == "end")
+    assert far.force_along(np.array([0, 0, 1.0])) == pytest.approx(LIFT * 1e3)
+    assert far.moment_about(np.array([0, 1.0, 0])) == pytest.approx(LOAD * SPAN**2 / 12 * 1e6)
+
+
+def test_a_support_with_a_load_on_it_neither_tells_nor_contradicts():
+    analysis = Analysis()
+    activities = []
+    bars = portal()
+    for name, bar in zip(("left", "beam", "right"), bars, strict=True):
+        member = analysis.member(bar.start * 1e3, bar.end * 1e3, bar.z, name)
+        samples = [(x * 1e3, bar.in_local(bar.section(x))) for x in np.linspace(0, bar.length, 5)]
+        activities.append(analysis.along(member, samples))
+    for bar, pressed in ((bars[0], 0.0), (bars[2], 70.0)):
+        node = analysis.node(bar.start * 1e3)
+        force = bar.force + (0, 0, pressed)
+        activities.append(analysis.support(node, (*force, *bar.moment)))
+        if pressed:
+            analysis.load(node, (0, 0, -pressed, 0, 0, 0))
+    analysis.results("ULS", *activities)
+    force, moment = on_corner(read_analysis(analysis.file))
+    assert (force[0], force[2], moment[1]) == pytest.approx((THRUST, LIFT, -CORNER))
+
+
+def test_a_model_placed_askew_turns_forces_axes_and_supports_with_it():
+    world = turned(70.0, about=(1, 2, 3), shift=(5000, 0, -400))
+    analysis = Analysis(world=world)
+    bar = Bar((0, 0, 0), (2, 0, 0), (-50, 4, 30), (1, -60, 8), z=(0, 1, 1))
+    member = analysis.member(bar.start * 1e3, bar.end * 1e3, bar.z)
+    samples = [(x * 1e3, bar.in_local(bar.section(x))) for x in (0.0, 2.0)]
+    own = turned(40.0, about=(0, 1, 1))
+    six = np.concatenate([own[:3, :3].T @ bar.force, own[:3, :3].T @ bar.moment])
+    support = analysis.support(analysis.node(bar.start * 1e3, own), six, "LOCAL_COORDS")
+    analysis.results("ULS", analysis.along(member, samples), support)
+    ends = [each for each in read_analysis(analysis.file) if each.end == "start"]
+    assert len(ends) == 2
+    for each in ends:
+        assert each.point == pytest.approx(world[:3, 3])
+        assert each.force @ each.basis == pytest.approx(world[:3, :3] @ bar.force * 1e3)
+        assert each.moment @ each.basis == pytest.approx(world[:3, :3] @ bar.moment * 1e6)
 
 
 def test_an_end_of_which_no_support_tells_is_not_known():
