@@ -112,7 +112,7 @@ def describe_bolts(
     """Tell a group's bolts. Two sizes or grades in one group are a finding, and the figure stays unknown."""
     chosen = [bolts[number] for number in group.bolts]
     findings: list[Finding] = []
-    for key in ("diameter", "length", "grade"):
+    for key in ("diameter", "length", "grade", "axis"):
         origins = [bolt.provenance[key] for bolt in chosen if key in bolt.provenance]
         if origins:
             provenance[f"bolts.{key}"] = origins[0]

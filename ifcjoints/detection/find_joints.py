@@ -122,7 +122,7 @@ def _reason(bolt: Bolt, through: list[Ply], parts: Sequence[Part]) -> str:
     if bolt.kind != "bolt":
         return f"{KIND_NAMES[bolt.kind]}: {bolt.kind_reason}"
     if bolt.point is None:
-        return "has neither a body nor a placement, so its axis is unknown"
+        return "its axis is unknown: no bolt can be made out in its body, or it has neither a body nor a placement"
     if not through:
         return "passes through no part that was read"
     part = parts[through[0].part]

@@ -21,6 +21,8 @@ from .fastener_kinds import Texts, is_named_bolt, kind_of, texts_of
 from .properties import PropertyTable
 from .unreadable import Unreadable
 
+FROM_PLACEMENT = Provenance(source="assumed", detail="the z axis of the bolt's placement, as it has no body")
+
 
 @dataclass(frozen=True, slots=True)
 class _Common:
@@ -91,7 +93,8 @@ class FastenerReader:
         length = settle_length(common.lengths, body, self._length, diameter.unit)
         self._note(element, diameter, length)
         point, direction = (body.point, body.direction) if body else self._axis_from_placement(element)
-        settled = {"diameter": diameter.provenance, "length": length.provenance, "grade": common.grade[1]}
+        axis = FROM_PLACEMENT if body is None and point is not None else None
+        settled = {"diameter": diameter.provenance, "length": length.provenance, "grade": common.grade[1], "axis": axis}
         if point is None and body_of(element) is not None and common.kind[0] == "bolt":
             self._conflicts.append((element.GlobalId, "no bolt can be made out in its body, so its axis is unknown"))
         return Bolt(

@@ -31,6 +31,8 @@ def test_nominal_sizes_in_mm_without_a_body(unit):
         model.product("IfcMechanicalFastener", "8.8", place, NominalDiameter=D, NominalLength=LENGTH)
     joint = check(model)
     assert "taken as mm" in joint.provenance["bolts.diameter"].detail
+    assert joint.provenance["bolts.axis"].source == "assumed"
+    assert any("bolts.axis was assumed" in finding.message for finding in joint.findings)
 
 
 @pytest.mark.parametrize("property_", [{"NominalDiameter": D, "NominalLength": LENGTH}, {"BoltDiameter": "24 mm"}])
