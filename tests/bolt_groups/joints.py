@@ -31,7 +31,7 @@ def joints(draw):
 
 
 moments = st.floats(1.0, 300.0).flatmap(lambda m: st.sampled_from([m, -m]))
-axial_forces = st.one_of(st.just(0.0), st.floats(-1500.0, 1000.0))
+axial_forces = st.one_of(st.just(0), st.integers(-15000, 10000)).map(lambda tenths: tenths / 10)
 forces = st.tuples(axial_forces, st.sampled_from([0.0, -120.0, 80.0]), moments)
 
 

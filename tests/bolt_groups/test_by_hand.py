@@ -239,3 +239,28 @@ def test_the_action_of_a_sloping_member_is_resolved_on_the_interface(method, slo
     assert sloping.resistance == pytest.approx(square.resistance)
     assert steps(sloping)["N_i"].value == pytest.approx(40.0)
     assert steps(sloping)["V_i"].value == pytest.approx(100.0)
+
+
+def test_brittle_rows_of_an_open_joint_pull_as_in_the_elastic_check():
+    joint = plain_joint(((350.0, 2), (250.0, 4), (50.0, 2)), flange_distance=400.0)
+    linear = answer(elastic, joint, (500.0, 0.0, 12.0))
+    assert linear.compression_kN == 0.0
+    assert answer(plastic, joint, (500.0, 0.0, 12.0), limit="always").row_forces_kN == linear.row_forces_kN
+    assert answer(plastic, joint, (500.0, 0.0, 12.0), limit="never").row_forces_kN != linear.row_forces_kN
+
+
+def test_the_limit_of_an_open_joint():
+    """Rows at 350 and 50 mm of two bolts, N = 700 kN midway: the upper at 2 F_t, the lower at 700 − 2 F_t."""
+    result = answer(elastic, plain_joint(((350.0, 2), (50.0, 2)), flange_distance=400.0), (700.0, 0.0, 1.0))
+    M_c = 2 * F_T * 350 + (700 - 2 * F_T) * 50
+    assert result.resistance["M_kNm"] == pytest.approx((M_c - 700 * 200) / 1e3, rel=1e-6)
+    assert "row 1, bolt tension" in result.governing
+
+
+def test_each_flange_has_its_own_resistance_when_both_are_pressed():
+    """N = −800 kN midway, no moment to speak of: 400 kN on each; the top flange lies at 60° and is good for half."""
+    joint = plain_joint(((450.0, 2), (60.0, 2)), flange_distance=400.0, inclinations=(0.0, 60.0))
+    for method in METHODS:
+        result = answer(method, joint, (-800.0, 0.0, 1e-6))
+        assert result.utilisation == pytest.approx(400 / (F_C / 2), rel=1e-6)
+        assert result.governing == "tension flange, pressed"

@@ -153,3 +153,18 @@ def test_utilisation_never_falls_with_the_shear(method, joint, M, limit):
     assert all(later >= earlier * (1 - 1e-9) or later > 1 for earlier, later in itertools.pairwise(used))
     fails = [result.status == "fail" for result in results]
     assert fails == sorted(fails)
+
+
+@both
+@given(joint=joints(), acting=forces, limit=st.sampled_from(LIMITS))
+def test_what_passes_overloads_no_bolt_and_no_flange(method, joint, acting, limit):
+    """Table 3.4 and the flange's yield, from the resistances in the result's own steps."""
+    result = answer(method, joint, acting, limit)
+    assume(result.status == "pass")
+    told = {step.symbol: step.value for step in result.steps}
+    shear = abs(acting[1]) / joint.bolts.count / told["F_v,Rd"]
+    for row, force in zip(joint.rows, result.row_forces_kN, strict=True):
+        tension = force / row.count / told["F_t,Rd"]
+        assert tension <= 1 + 1e-6
+        assert shear + tension / 1.4 <= 1 + 1e-6
+    assert result.compression_kN <= (told["F_c,Rd"] + told.get("F_c,Rd,2", 0.0)) * (1 + 1e-6)
