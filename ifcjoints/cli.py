@@ -183,6 +183,9 @@ def _print_summary(console: Console, found: Audit, written: tuple[Path, ...]) ->
         f"{found.coverage.bolts} bolts, {counts.bolts_elsewhere} of them in no joint. "
         f"{len(found.problems)} problems of the model and the actions."
     )
+    if found.properties_used:
+        told = ", ".join(f"{name} ({times})" for name, times in found.properties_used.items())
+        console.print(Text(f"Properties read: {_printable(told)}."))
     console.print(words.CAUTION)
     for path in written:
         console.print(str(path))
