@@ -24,6 +24,18 @@ Forces = dict[int, Quantity]
 
 
 @dataclass(frozen=True, slots=True)
+class Filled:
+    """Rows filled until the compression flange is at its resistance, M_c of them, and what stopped the filling.
+
+    `M_c` is None where the rows with y > 0 do not even carry an axial tension.
+    """
+
+    forces: Forces
+    M_c: Quantity | None
+    stop: str
+
+
+@dataclass(frozen=True, slots=True)
 class Limit:
     """The greatest M_c, the forces at it, and what stops it."""
 
@@ -32,44 +44,74 @@ class Limit:
     stop: str
 
 
-def plastic_limit(group: Group, brittle: str, mark: str, trace: Trace) -> Limit:
-    """Return the greatest M_c with rows filled until the flange's resistance stops them.
-
-    For an axial force that the joint carries alone. Where no row pulls, or brittle rows leave the joint open,
-    the linear distribution answers.
-    """
+def fill_to_flange(group: Group, brittle: str, mark: str, trace: Trace) -> Filled | None:
+    """Fill the rows until the compression flange's resistance stops them; None where it is too small for N alone."""
     if float(group.flange) + float(group.N) <= 0:
-        return _linear(group, mark, trace)
+        return None
     room = group.flange + group.N if float(group.N) else group.flange
     room = trace.step(f"ΣF_max{mark}", room, "kN", f"{STATICS}, compression flange at its resistance")
     forces = _fill(group, group.pulling, room, brittle, mark, trace)
-    pull = _sum(forces)
-    stop = "compression flange" if pull >= float(room) * (1 - SLACK) else _bolts_stop(group, brittle)
-    if pull < float(group.N):
-        if brittle:
-            return _linear(group, mark, trace)
+    if _sum(forces) < float(group.N):
+        return Filled(forces, None, "bolt tension, joint open")
+    M_c = trace.step(f"M_c,Rd{mark}", _moment(group, forces), "kNm", METHOD)
+    if _sum(forces) >= float(room) * (1 - SLACK):
+        return Filled(forces, M_c, "compression flange")
+    bolts = f"row {group.pulling[0].index + 1}, bolt tension" if brittle else "bolt tension of all pulling rows"
+    return Filled(forces, M_c, bolts)
+
+
+def plastic_limit(group: Group, filled: Filled | None, brittle: str, mark: str, trace: Trace) -> Limit:
+    """Return the greatest M_c, for an axial force that the joint carries alone.
+
+    Where no row pulls, or brittle rows leave the joint open, the linear distribution answers.
+    """
+    if filled is None or (filled.M_c is None and brittle):
+        M_c, stop = linear_limit(group, trace)
+        return Limit(M_c, linear_spread(group, M_c, mark, trace), stop)
+    forces, M_c_filled = filled.forces, filled.M_c
+    if M_c_filled is None:
         rest = trace.step(f"ΔF{mark}", group.N - total(forces.values()), "kN", f"{STATICS}, N not yet carried")
         behind = [row for row in group.rows if row.y <= 0]
-        forces |= _fill(group, behind, rest, "", mark, trace)
-        stop = "bolt tension, joint open"
-    M_c = trace.step(f"M_c,Rd{mark}", _moment(group, forces), "kNm", METHOD)
-    forces, zero = _with_zeros(group, forces, trace), trace.constant("0", 0.0)
-    return Limit(M_c, Spread(forces, compression(group, forces, mark, trace), zero), stop)
+        forces = forces | _fill(group, behind, rest, "", mark, trace)
+        M_c_filled = trace.step(f"M_c,Rd{mark}", _moment(group, forces), "kNm", METHOD)
+    C = compression(group, forces, mark, trace)
+    return Limit(M_c_filled, Spread(_with_zeros(group, forces, trace), C, trace.constant("0", 0.0)), filled.stop)
 
 
-def plastic_spread(group: Group, M_c: Quantity, brittle: str, mark: str, trace: Trace) -> Spread | None:
-    """Return row and flange forces that balance N and M_c within every resistance; None where none do."""
-    spread = _bearing(group, M_c, brittle, mark, trace)
-    if spread is not None or float(group.N) == 0:
-        return spread
-    if brittle or float(group.N) < 0:
-        return _linear_within(group, M_c, mark, trace)
-    return _open(group, M_c, mark, trace)
+def plastic_spread(
+    group: Group, M_c: Quantity, filled: Filled | None, brittle: str, mark: str, trace: Trace
+) -> Spread | None:
+    """Return row and flange forces that balance N and M_c within every resistance; None where none do.
+
+    Those of the filled rows in proportion; else, where that would leave the flange in tension or no row pulls, the
+    linear ones; else, for rows that may stretch, any that an open joint can carry.
+    """
+    spread = _scaled(group, M_c, filled, mark, trace) if filled is not None else None
+    if spread is None and float(group.N):
+        spread = _linear_within(group, M_c, mark, trace)
+    if spread is None and not brittle and float(group.N) > 0:
+        spread = _open(group, M_c, mark, trace)
+    return spread
 
 
-def _linear(group: Group, mark: str, trace: Trace) -> Limit:
-    M_c, stop = linear_limit(group, trace)
-    return Limit(M_c, linear_spread(group, M_c, mark, trace), stop)
+def _scaled(group: Group, M_c: Quantity, filled: Filled, mark: str, trace: Trace) -> Spread | None:
+    """Scale the filled rows so that they balance M_c; None where they cannot, or the flange would be in tension."""
+    if filled.M_c is None or not 0 <= float(M_c) <= float(filled.M_c) * (1 + SLACK):
+        return None
+    aside = Trace()
+    share = trace.constant("0", 0.0)
+    if float(M_c) > 0:
+        share = aside.step(f"μ{mark}", M_c / filled.M_c, "", f"{METHOD}, in proportion to the moment")
+    forces = {
+        row.index: aside.step(_symbol(row, mark), share * filled.forces[row.index], "kN", METHOD)
+        for row in group.pulling
+        if row.index in filled.forces
+    }
+    C = compression(group, forces, mark, aside)
+    if float(C) < -SLACK * (float(group.flange) + abs(float(group.N))):
+        return None
+    trace.steps += aside.steps
+    return Spread(_with_zeros(group, forces, trace), C, trace.constant("0", 0.0))
 
 
 def _linear_within(group: Group, M_c: Quantity, mark: str, trace: Trace) -> Spread | None:
@@ -88,28 +130,8 @@ def _within(spread: Spread, group: Group) -> bool:
     return all(float(force) <= resistance * (1 + SLACK) + SLACK for force, resistance in pairs)
 
 
-def _bearing(group: Group, M_c: Quantity, brittle: str, mark: str, trace: Trace) -> Spread | None:
-    """Fill rows until they balance M_c; None where they cannot, or the flange would not bear or bears too much."""
-    if float(M_c) < 0 or not group.pulling:
-        return None
-    aside, left = Trace(), M_c
-    forces: Forces = {}
-    for row in group.pulling:
-        if float(left) > 0:
-            force = least(left / row.y, *_caps(group, row, forces, brittle))
-            forces[row.index] = aside.step(_symbol(row, mark), force, "kN", _reference(brittle))
-            left = left - forces[row.index] * row.y
-    forces = _with_zeros(group, forces, trace)
-    C = compression(group, forces, mark, aside)
-    scale = SLACK * (float(group.flange) + abs(float(group.N)))
-    if float(left) > SLACK * float(M_c) or not -scale <= float(C) <= float(group.flange) + scale:
-        return None
-    trace.steps += aside.steps
-    return Spread(forces, C, trace.constant("0", 0.0))
-
-
 def _open(group: Group, M_c: Quantity, mark: str, trace: Trace) -> Spread | None:
-    """Return forces where the filled rows would leave the flange in tension: between the extremes that carry N."""
+    """Return forces of an open joint between its two extremes: rows filled with N from the one or the other side."""
     aside = Trace()
     far = _with_zeros(group, _fill(group, group.rows, group.N, "", f"{mark},far", aside), aside)
     near = _with_zeros(group, _fill(group, group.rows[::-1], group.N, "", f"{mark},near", aside), aside)
@@ -137,7 +159,9 @@ def _open(group: Group, M_c: Quantity, mark: str, trace: Trace) -> Spread | None
 
 def _bearing_other_way(group: Group, M_c: Quantity, mark: str, trace: Trace) -> Spread | None:
     aside = Trace()
-    spread = _bearing(group.turned(aside), group.turned_moment(M_c, aside), "", mark, aside)
+    turned = group.turned(aside)
+    filled = fill_to_flange(turned, "", "′", aside)
+    spread = _scaled(turned, group.turned_moment(M_c, aside), filled, mark, aside) if filled else None
     trace.steps += aside.steps if spread else []
     return spread.turned() if spread else None
 
@@ -157,10 +181,6 @@ def _caps(group: Group, row: BoltRow, forces: Forces, brittle: str) -> list[Quan
     """Return what limits a row: its bolts, and for brittle rows the triangle below the farthest one."""
     full, far = row.n * group.tension, group.pulling[0] if brittle else row
     return [full] if row is far else [full, row.n * (forces[far.index] / far.n) * row.y / far.y]
-
-
-def _bolts_stop(group: Group, brittle: str) -> str:
-    return f"row {group.pulling[0].index + 1}, bolt tension" if brittle else "bolt tension of all pulling rows"
 
 
 def _reference(brittle: str) -> str:

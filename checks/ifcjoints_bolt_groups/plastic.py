@@ -26,9 +26,11 @@ unless the end plate, or the column flange or second end plate bolted to it, is 
 break, t ≤ d/1.9·√(f_ub/f_y) (SCI P398, step 1C; UK NA to BS EN 1993-1-8, NA.2.7: from memory); "always" and "never" as
 they say. Where brittle rows leave the joint open, the linear distribution of the elastic check answers.
 
-The utilisation is |M| over M_Rd at the action's axial force and shear, or the bolts' shear, the flanges' compression or
-the axial tension over all bolts where that is more. The row forces at the action are filled from the farthest row until
-they balance M; in an open joint they lie between the distributions filled from either side with N.
+The row forces at the action are those at the resistance in proportion to M_c; where that would leave the flange in
+tension or no row pulls, those of the elastic check; and where these overload an open joint that could still stretch,
+forces between the rows filled with N from the one and from the other side. The utilisation is |M| over M_Rd at the
+action's axial force and shear, or the use of the most loaded bolt, of a flange, of the bolts in shear, or of all bolts
+in axial tension, where that is more.
 
 Needs
 -----
@@ -53,7 +55,7 @@ M_Rd = 406.1·0.450 + 406.1·0.340 + 50.5·0.060 = 323.8 kNm.
 
 from __future__ import annotations
 
-from dataclasses import replace
+from dataclasses import dataclass, replace
 from typing import Literal
 
 from ifcjoints.checking import Quantity, Subject, Trace, Verdict, check
@@ -63,17 +65,26 @@ from ifcjoints.model.base import Frozen
 from .bolt import BoltResistance, bolt_resistance
 from .brittleness import why_brittle
 from .elastic import linear_use, nil_resistance
-from .filling import METHOD, Limit, plastic_limit, plastic_spread
+from .filling import METHOD, Filled, Limit, fill_to_flange, plastic_limit, plastic_spread
 from .flange import interface_of
 from .group import Group, Spread, group_of
 from .loads import STATICS, Loads, given_loads
-from .use import Ratios, beyond_alone, flanges_pressed, governing
+from .use import Ratios, beyond_alone, bolts_and_flanges, governing
 
 
 class PlasticOptions(Frozen):
     """`triangular_limit`: whether rows keep to a triangle below the farthest one."""
 
     triangular_limit: Literal["never", "brittle_rows", "always"] = "brittle_rows"
+
+
+@dataclass(frozen=True, slots=True)
+class Resistance:
+    """M_Rd in Nmm, the rows as they were filled for it, and the forces at it; no limit where N alone is too much."""
+
+    M_Rd: Quantity
+    filled: Filled | None
+    limit: Limit | None
 
 
 @check(
@@ -90,22 +101,21 @@ def plastic(subject: Subject, trace: Trace) -> Verdict:
     loads = given_loads(subject, trace)
     brittle = triangular_limit(subject, trace)
     group = group_of(subject, bolt.tension, loads.N, trace)
-    beside, resistance = group, {}
+    beside, stated = group, {}
     if float(loads.V) > 0:
         beside = replace(group, tension=trace.step("F_t,V", bolt.beside_shear(loads.F_v), "kN", bolt.clause))
     if beside.tension < group.tension:
-        M_Rd0, _ = moment_resistance(group, brittle, ",0", trace)
-        resistance["M_without_V_kNm"] = float(M_Rd0) / 1e6
-    M_Rd, limit = moment_resistance(beside, brittle, "", trace)
+        stated["M_without_V_kNm"] = float(moment_resistance(group, brittle, ",0", trace).M_Rd) / 1e6
+    resistance = moment_resistance(beside, brittle, "", trace)
     utilisation = None
-    if subject.action is None and limit is not None:
-        spread, governs = limit.spread, limit.stop
+    if subject.action is None and resistance.limit is not None:
+        spread, governs = resistance.limit.spread, resistance.limit.stop
     else:
-        plainly = use_at(beside, bolt, loads, (M_Rd, limit), brittle, trace) if limit else None
+        plainly = use_at(beside, bolt, loads, resistance, brittle, trace)
         spread, ratios = plainly or linear_answer(group, bolt, loads, trace)
         utilisation, governs = governing(ratios)
     return Verdict(
-        resistance={"M_kNm": float(M_Rd) / 1e6} | resistance,
+        resistance={"M_kNm": float(resistance.M_Rd) / 1e6} | stated,
         governing=governs,
         utilisation=utilisation,
         row_forces_kN=[float(spread.rows[index]) / 1e3 for index in range(len(group.rows))],
@@ -121,29 +131,34 @@ def triangular_limit(subject: Subject, trace: Trace) -> str:
     return "option triangular_limit is always" if options.triangular_limit == "always" else ""
 
 
-def moment_resistance(group: Group, brittle: str, mark: str, trace: Trace) -> tuple[Quantity, Limit | None]:
-    """Return M_Rd beside the axial force, and the forces at it; nil and None where that force alone is too much."""
+def moment_resistance(group: Group, brittle: str, mark: str, trace: Trace) -> Resistance:
+    """Return M_Rd beside the axial force, and the forces at it."""
+    filled = fill_to_flange(group, brittle, mark, trace)
     if float(group.N):
         aside = Trace()
-        if plastic_spread(group, group.M_c_alone(aside), brittle, ",N", aside) is None:
-            return nil_resistance("the axial force alone", f"M_Rd{mark}", trace), None
-    limit = plastic_limit(group, brittle, mark, trace)
-    return trace.step(f"M_Rd{mark}", group.about_axis(limit.M_c), "kNm", METHOD), limit
+        if plastic_spread(group, group.M_c_alone(aside), filled, brittle, ",N", aside) is None:
+            return Resistance(nil_resistance("the axial force alone", f"M_Rd{mark}", trace), filled, None)
+    limit = plastic_limit(group, filled, brittle, mark, trace)
+    return Resistance(trace.step(f"M_Rd{mark}", group.about_axis(limit.M_c), "kNm", METHOD), filled, limit)
 
 
 def use_at(
-    group: Group, bolt: BoltResistance, loads: Loads, resistance: tuple[Quantity, Limit], brittle: str, trace: Trace
+    group: Group, bolt: BoltResistance, loads: Loads, resistance: Resistance, brittle: str, trace: Trace
 ) -> tuple[Spread, Ratios] | None:
     """Return the forces at the action, or those at the resistance where it is exceeded, and the ratios.
 
     None where nothing balances the action and no resistance can be put in relation to it.
     """
-    M_Rd, limit = resistance
+    M_Rd, limit = resistance.M_Rd, resistance.limit
+    if limit is None:
+        return None
     M_cEd = trace.step("M_c,Ed", group.about_flange(loads.M), "kNm", STATICS)
-    spread = plastic_spread(group, M_cEd, brittle, ",Ed", trace)
+    spread = plastic_spread(group, M_cEd, resistance.filled, brittle, ",Ed", trace)
     if spread is None and not 0 < float(M_Rd) < float(loads.M):
         return None
-    ratios = {} if spread is None else flanges_pressed(spread, group, trace)
+    ratios = {}
+    if spread is not None and float(group.tension) > 0:
+        ratios = bolts_and_flanges(spread, group, trace)
     if float(loads.N) > 0:
         ratios["axial tension"] = trace.step("η_N", loads.N / (group.count * group.tension), "", STATICS)
     if float(loads.V) > 0:
