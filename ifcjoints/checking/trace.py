@@ -24,6 +24,9 @@ from ..model.results import Step
 SCALE = {"kN": 1e3, "kNm": 1e6}
 """How many of the inner unit (N, Nmm) make one of a shown unit."""
 
+CONSTANTS = {math.pi: "π", math.sqrt(2): "√2", math.sqrt(3): "√3"}
+"""Numbers that a person would write as a symbol."""
+
 _SUM, _QUOTIENT, _PRODUCT, _POWER, _ATOM = 1, 2, 3, 4, 5
 """How firmly a formula holds together. A quotient is looser than a product, so that a / b is never read into a·b."""
 
@@ -117,7 +120,7 @@ N = TypeVar("N", float, Quantity)
 def _quantity(value: Quantity | float) -> Quantity:
     if isinstance(value, Quantity):
         return value
-    return Quantity(value, figure(value), figure(value))
+    return Quantity(value, CONSTANTS.get(value) or figure(value), figure(value))
 
 
 def _function(name: str, value: float, arguments: Sequence[Quantity]) -> Quantity:
