@@ -24,18 +24,21 @@ Component = Literal[
 class Limit(Generic[N]):
     """What a component allows one row, or a group of rows that follow each other, to carry together; N.
 
-    Rows are numbered from 0, the farthest from the centre of compression. `detail` tells the mode and the pattern.
+    Rows are numbered from 0, the farthest from the centre of compression. A T-stub tells its mode, and the pattern of
+    yield lines where the mode has one.
     """
 
     rows: tuple[int, ...]
     component: Component
     resistance: N
     where: str = ""
-    detail: str = ""
+    mode: str = ""
+    pattern: str = ""
 
     def __str__(self) -> str:
-        """Tell rows, component and mode."""
-        return ", ".join([rows_in_words(self.rows), named(self.component, self.where), *filter(None, [self.detail])])
+        """Tell rows, component, mode and pattern."""
+        words = [rows_in_words(self.rows), named(self.component, self.where), self.mode, self.pattern]
+        return ", ".join(word for word in words if word)
 
 
 @dataclass(frozen=True, slots=True)

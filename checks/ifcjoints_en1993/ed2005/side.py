@@ -107,8 +107,9 @@ def _bending(
     F_t = step("ΣF_t,Rd", 2 * len(rows) * bolts.F_tRd, "kN", TABLE_3_4)
     symbol = f"F_t,{side.mark},{rows_in_figures(rows)}"
     strength = resistance(flange, lengths, len(rows), F_t, factors.gamma_M0, symbol, step)
-    detail = f"{strength.mode}, {lengths.pattern}" if strength.mode != "mode 3" else strength.mode
-    return Limit(rows, side.bending, strength.F_TRd, side.where, detail)
+    patterns = {"mode 2": "non-circular", "mode 3": ""}
+    pattern = patterns.get(strength.mode, lengths.pattern)
+    return Limit(rows, side.bending, strength.F_TRd, side.where, strength.mode, pattern)
 
 
 def _punching(
