@@ -19,6 +19,7 @@ from .clippings import end_clipped, first_operand, half_space
 from .kernel import solid_of_item
 from .placements import Placements, is_rigid
 from .profiles import Profile, circle_profile, read_profile
+from .reach import refuse_wide_curves, within_reach
 from .units import Units
 from .unreadable import Unreadable
 
@@ -115,17 +116,26 @@ class BodyReader:
         return self._placements.of_element(element.ObjectPlacement)
 
     def item(self, item: Any) -> list[PlacedPiece]:
-        """Return one representation item's solids in its own axes."""
+        """Return one representation item's solids in its own axes; OutOfReach for sizes that no building has."""
         number = item.id()
         if number not in self._known:
-            reader = self._kinds.get(item.is_a(), self._from_kernel)
-            try:
-                self._known[number] = reader(item)
-            except Unreadable:
-                self._known[number] = self._from_kernel(item)
+            # What overflows here is found out below, in the corners that come of it.
+            with np.errstate(over="ignore", invalid="ignore"):
+                pieces = self._read(item)
+            for placed in pieces:
+                within_reach(placed.piece.solid.vertices)
+            self._known[number] = pieces
         return self._known[number]
 
+    def _read(self, item: Any) -> list[PlacedPiece]:
+        reader = self._kinds.get(item.is_a(), self._from_kernel)
+        try:
+            return reader(item)
+        except Unreadable:
+            return self._from_kernel(item)
+
     def _from_kernel(self, item: Any) -> list[PlacedPiece]:
+        refuse_wide_curves(item, self._placements.length)
         base = first_operand(item)
         cut_from = None
         if base is not None and base.is_a() == "IfcExtrudedAreaSolid":

@@ -9,12 +9,13 @@ import numpy as np
 
 from ..model.geometry import unit
 from .axial import BoltBody
+from .reach import points_in_mm
 
 
 def bolts_from_lines(element: Any, length_unit: float) -> list[BoltBody]:
     """Return a bolt for each two-point line among an element's representations, in the element's own axes."""
     pairs = [line for line in lines_of(element) if len(line) == 2 and len(line[0]) == 3]
-    return [_bolt(np.array(pair, float) * length_unit) for pair in pairs]
+    return [_bolt(points_in_mm(pair, length_unit)) for pair in pairs]
 
 
 def lines_of(element: Any) -> list[Sequence[Sequence[float]]]:

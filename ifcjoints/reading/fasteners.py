@@ -19,6 +19,7 @@ from .bolt_shapes import BoltShapes
 from .bolt_sizes import Settled, StatedSize, settle_diameter, settle_length, sizes_in_texts
 from .fastener_kinds import Texts, is_named_bolt, kind_of, texts_of
 from .properties import PropertyTable
+from .reach import FARTHEST, OutOfReach
 from .unreadable import Unreadable
 
 FROM_PLACEMENT = Provenance(source="assumed", detail="the z axis of the bolt's placement, as it has no body")
@@ -81,7 +82,7 @@ class FastenerReader:
         """Measure the bolts of an element, and tell if there are but loose parts."""
         try:
             pieces = self._bodies.own_pieces(element)
-        except Unreadable as reason:
+        except (Unreadable, OutOfReach) as reason:
             self._conflicts.append((element.GlobalId, f"the bolt's body cannot be read: {reason}"))
             return [], False
         bolts, loose = self._shapes.measured(pieces)
@@ -125,7 +126,7 @@ class FastenerReader:
         found = []
         for each in (element, owner):
             value = getattr(each, name, None) if each is not None else None
-            if value and value > 0:
+            if value and 0 < value * self._length < FARTHEST:
                 found.append(StatedSize(float(value) * self._length, f"{each.is_a()}.{name}"))
         stated = self._properties.lengths(element, meaning)
         return [*found, *(StatedSize(value, origin, sure) for value, origin, sure in stated)]
@@ -162,6 +163,13 @@ class FastenerReader:
             return None, None
         matrix = self._bodies.world_of(element)
         return matrix[:3, 3], matrix[:3, 2]
+
+
+def unknown_bolt(element: Any) -> Bolt:
+    """Return the bolt that an element stands for which cannot be read: it counts, though nothing is known of it."""
+    name = element.Name or element.is_a()
+    reason = "it cannot be read"
+    return Bolt(element.GlobalId, element.id(), 0, name, "bolt", reason, None, None, None, None, None)
 
 
 def _known_grades(texts: Texts) -> list[tuple[str, str, str]]:

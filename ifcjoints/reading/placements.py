@@ -8,6 +8,7 @@ import numpy as np
 
 from ..model.geometry import cross, unit
 from ..model.units import Array
+from .reach import within_reach
 
 
 class Placements:
@@ -18,9 +19,9 @@ class Placements:
         self._known: dict[int, Array] = {}
 
     def point(self, point: Any) -> Array:
-        """Return a cartesian point (3,) in mm."""
+        """Return a cartesian point (3,) in mm; OutOfReach for one that no building has."""
         coordinates = [float(value) * self.length for value in point.Coordinates]
-        return np.array([*coordinates, 0.0, 0.0][:3])
+        return within_reach(np.array([*coordinates, 0.0, 0.0][:3]))
 
     def of_element(self, placement: Any) -> Array:
         """Return an object placement in the world; the identity where there is none."""
@@ -82,8 +83,9 @@ def _direction(direction: Any, default: tuple[float, float, float]) -> Array:
     if direction is None:
         return np.array(default)
     ratios = np.array([*direction.DirectionRatios, 0.0][:3], float)
-    length = np.linalg.norm(ratios)
-    return ratios / length if length > 1e-12 else np.array(default)
+    largest = np.abs(ratios).max()
+    # Made small first, as the squares of absurd ratios are not finite.
+    return unit(ratios / largest) if 1e-12 < largest < np.inf else np.array(default)
 
 
 def _matrix(x: Array, z: Array, origin: Array) -> Array:

@@ -11,6 +11,7 @@ import ifcopenshell.util.element as element_util
 
 from ..model.units import Mm
 from ..settings import Meaning, PropertyRow, ReadingSettings
+from .reach import FARTHEST
 
 INCH: Mm = 25.4
 
@@ -58,7 +59,7 @@ class PropertyTable:
         found = []
         for stated in self.stated(element, meaning):
             length = _length(stated.value, stated.row.unit, self._length)
-            if length is not None and length[0] > 0:
+            if length is not None and 0 < length[0] < FARTHEST:
                 found.append((length[0], stated.origin, length[1]))
                 self._asked.add(stated.origin)
         return found

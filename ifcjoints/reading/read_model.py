@@ -22,7 +22,7 @@ from .bodies import BodyReader, Piece, PlacedPiece
 from .built_up import join_built_up
 from .designations import read_designation
 from .fastener_kinds import is_named_bolt
-from .fasteners import FastenerReader
+from .fasteners import FastenerReader, unknown_bolt
 from .faults import body_faults, doubled_ids
 from .holes import hole_from_opening, holes_in_solid, with_holes_seen
 from .kernel import solid_from_kernel
@@ -79,7 +79,7 @@ class _Reading:
         self.problems += doubled_ids(self._sorted("IfcElement"))
         for element in self._sorted("IfcFastener", "IfcMechanicalFastener"):
             if element.is_a("IfcMechanicalFastener"):
-                bolts += self._guarded(element, self.fasteners.read) or []
+                bolts += self._guarded(element, self.fasteners.read) or [unknown_bolt(element)]
             elif is_weld(element):
                 weld = self._guarded(element, lambda each: read_weld(each, self.bodies, self.properties))
                 welds += [weld] if weld else []

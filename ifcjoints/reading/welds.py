@@ -14,6 +14,7 @@ from .bodies import BodyReader
 from .bolt_lines import lines_of
 from .fastener_kinds import texts_of
 from .properties import PropertyTable
+from .reach import points_in_mm
 
 SQRT_HALF = 0.5**0.5
 
@@ -50,5 +51,5 @@ def _points(element: Any, bodies: BodyReader) -> Array | None:
     if not path:
         return None
     world = bodies.world_of(element)
-    points: Array = np.array(path, float) * bodies.length_unit @ world[:3, :3].T + world[:3, 3]
+    points: Array = points_in_mm(path, bodies.length_unit) @ world[:3, :3].T + world[:3, 3]
     return points
